@@ -5,8 +5,8 @@ import "math"
 // PrincipalValues returns the eigenvalues of a in descending order. They are bit for bit the values of Principal, and have
 // its accuracy.
 func (a Sym) PrincipalValues() [3]float64 {
-	w, _ := a.principal(false)
-	return w
+	p, q, r := a.principal()
+	return [3]float64{p.value, q.value, r.value}
 }
 
 // Principal returns the eigenvalues of a in descending order and their unit eigenvectors: a·directions[i] =
@@ -20,150 +20,141 @@ func (a Sym) PrincipalValues() [3]float64 {
 // set in their eigenspace will do; a multiple of the unit tensor gives the coordinate axes. Between nearly equal values the
 // directions are as uncertain as the problem makes them (rounding divided by the relative gap), yet orthonormal to rounding.
 //
-// A component that is NaN or infinite makes every result NaN.
+// A component that is NaN or infinite makes every result NaN. A principal value beyond the range of float64 is infinite.
 func (a Sym) Principal() (values [3]float64, directions [3][3]float64) {
-	return a.principal(true)
+	p, q, r := a.principal()
+	return [3]float64{p.value, q.value, r.value}, [3][3]float64{p.axis.array(), q.axis.array(), r.axis.array()}
 }
 
-// principal is both of the above; the directions are left zero unless they are asked for.
-func (a Sym) principal(directions bool) (w [3]float64, v [3][3]float64) {
-	if !a.IsFinite() {
-		nan := math.NaN()
-		w = [3]float64{nan, nan, nan}
-		return w, [3][3]float64{w, w, w}
-	}
-	const huge, guard = 0x1p1020, 0x1p-4 // above, sums of components could overflow
+// eigenpair is a principal value and its unit direction.
+type eigenpair struct {
+	value float64
+	axis  vector
+}
+
+// principal returns the pairs in descending order; the axes are right-handed.
+func (a Sym) principal() (p, q, r eigenpair) {
+	x, y, z := vector{1, 0, 0}, vector{0, 1, 0}, vector{0, 0, 1}
 	unguard := 1.0
-	if a.maxAbs() > huge {
-		a, unguard = a.Scale(guard), 1/guard
+	if !(a.Dot(a) <= math.MaxFloat64) { // huge, or not finite
+		if !a.IsFinite() {
+			n := math.NaN()
+			p = eigenpair{n, vector{n, n, n}}
+			return p, p, p
+		}
+		if a.maxAbs() > 0x1p1020 { // sums of components could overflow
+			a, unguard = a.Scale(0x1p-4), 0x1p4
+		}
 	}
-	x, y, z := [3]float64{1, 0, 0}, [3]float64{0, 1, 0}, [3]float64{0, 0, 1}
 	switch {
-	case a[YZ] == 0 && a[XZ] == 0 && a[XY] == 0:
-		w, v = [3]float64{a[XX], a[YY], a[ZZ]}, [3][3]float64{x, y, z}
 	case a[YZ] == 0 && a[XZ] == 0:
-		w[0], w[1], v[0], v[1] = planePrincipal(a[XX], a[XY], a[YY], x, y, directions)
-		w[2], v[2] = a[ZZ], z
+		p, q = planePrincipal(a[XX], a[XY], a[YY], x, y)
+		r = eigenpair{a[ZZ], z}
 	case a[XZ] == 0 && a[XY] == 0:
-		w[1], w[2], v[1], v[2] = planePrincipal(a[YY], a[YZ], a[ZZ], y, z, directions)
-		w[0], v[0] = a[XX], x
+		q, r = planePrincipal(a[YY], a[YZ], a[ZZ], y, z)
+		p = eigenpair{a[XX], x}
 	case a[XY] == 0 && a[YZ] == 0:
-		w[2], w[0], v[2], v[0] = planePrincipal(a[ZZ], a[XZ], a[XX], z, x, directions)
-		w[1], v[1] = a[YY], y
+		r, p = planePrincipal(a[ZZ], a[XZ], a[XX], z, x)
+		q = eigenpair{a[YY], y}
 	default:
-		w, v = a.spacePrincipal(directions)
+		p, q, r = a.spacePrincipal()
 	}
-	order(&w, &v, 0, 1)
-	order(&w, &v, 1, 2)
-	order(&w, &v, 0, 1)
-	return [3]float64{w[0] * unguard, w[1] * unguard, w[2] * unguard}, v
+	p, q = descending(p, q)
+	q, r = descending(q, r)
+	p, q = descending(p, q)
+	p.value *= unguard
+	q.value *= unguard
+	r.value *= unguard
+	return p, q, r
 }
 
-// planePrincipal diagonalises the block (p b; b r) in the plane of two unit vectors by one Jacobi rotation, which leaves a
+// descending swaps two pairs that are out of order, and turns one axis over so that the three stay right-handed.
+func descending(p, q eigenpair) (eigenpair, eigenpair) {
+	if p.value < q.value {
+		return q, eigenpair{p.value, vector{0 - p.axis.x, 0 - p.axis.y, 0 - p.axis.z}} // 0 - 0 is no minus zero
+	}
+	return p, q
+}
+
+// planePrincipal diagonalises the block (a b; b c) in the plane of two unit vectors by one Jacobi rotation, which leaves a
 // diagonal block untouched and keeps the sense of the pair.
-func planePrincipal(p, b, r float64, x, y [3]float64, directions bool) (float64, float64, [3]float64, [3]float64) {
+func planePrincipal(a, b, c float64, x, y vector) (p, q eigenpair) {
 	if b == 0 {
-		return p, r, x, y
+		return eigenpair{a, x}, eigenpair{c, y}
 	}
-	theta := (r - p) / (2 * b)
-	t := math.Copysign(1/(math.Abs(theta)+math.Sqrt(theta*theta+1)), theta) // tangent of the smaller angle
-	if directions {
-		c := 1 / math.Sqrt(t*t+1)
-		x, y = combine(c, x, -t*c, y), combine(t*c, x, c, y)
-	}
-	return p - t*b, r + t*b, x, y
+	cot := (c - a) / (2 * b) // of twice the angle; may be infinite
+	t := math.Copysign(1/(math.Abs(cot)+math.Sqrt(cot*cot+1)), cot)
+	cos := 1 / math.Sqrt(t*t+1)
+	sin := t * cos
+	return eigenpair{a - t*b, combine(cos, x, -sin, y)}, eigenpair{c + t*b, combine(sin, x, cos, y)}
 }
 
 // spacePrincipal treats a tensor with no coordinate axis among its principal axes. It works on the deviator, whose
 // eigenvalue farthest from the other two is a well-conditioned root of the characteristic cubic: its eigenvector is a
 // column of an adjugate, and the other two values, however close, are left to a 2×2 problem that is solved exactly.
 // (Deflation after Scherzinger and Dohrmann, Comput. Methods Appl. Mech. Engrg. 197 (2008), 4007, from memory.)
-func (a Sym) spacePrincipal(directions bool) (w [3]float64, v [3][3]float64) {
+func (a Sym) spacePrincipal() (p, q, r eigenpair) {
 	s, exponent := a.Deviator(), 0
-	if m := s.maxAbs(); !(m > 0x1p-200 && m < 0x1p200) { // cubes and products of four must stay in range
-		_, exponent = math.Frexp(m)
+	if d := s.Dot(s); !(d > 0x1p-200 && d < 0x1p200) { // products of up to six components must stay in range
+		_, exponent = math.Frexp(s.maxAbs())
 		s = s.ldexp(-exponent)
 	}
 	eta := s.distinctValue()
 	x := s.eigenvector(eta)
-	y := perpendicular(x)
-	z := cross(x, y)
+	y := x.perpendicular()
+	z := x.cross(y)
 	sy, sz := s.apply(y), s.apply(z)
-	w[0], v[0] = eta, x
-	w[1], w[2], v[1], v[2] = planePrincipal(dot(y, sy), dot(z, sy), dot(z, sz), y, z, directions)
-	m := a.Mean()
-	for i := range w {
-		if exponent != 0 {
-			w[i] = math.Ldexp(w[i], exponent)
-		}
-		w[i] += m
+	p = eigenpair{eta, x}
+	q, r = planePrincipal(y.dot(sy), z.dot(sy), z.dot(sz), y, z)
+	if exponent != 0 {
+		p.value, q.value, r.value = math.Ldexp(p.value, exponent), math.Ldexp(q.value, exponent), math.Ldexp(r.value, exponent)
 	}
-	return w, v
+	m := a.Mean()
+	p.value += m
+	q.value += m
+	r.value += m
+	return p, q, r
 }
 
 // distinctValue returns the eigenvalue of a deviator that is farthest from the other two: the greatest when the determinant
 // is positive, the smallest when it is negative.
-func (s Sym) distinctValue() float64 {
-	j2 := 0.5*(s[XX]*s[XX]+s[YY]*s[YY]+s[ZZ]*s[ZZ]) + s[YZ]*s[YZ] + s[XZ]*s[XZ] + s[XY]*s[XY]
-	j3 := s[XX]*(s[YY]*s[ZZ]-s[YZ]*s[YZ]) + s[XY]*(s[YZ]*s[XZ]-s[XY]*s[ZZ]) + s[XZ]*(s[XY]*s[YZ]-s[YY]*s[XZ])
-	g := math.Sqrt(j2 / 3)
-	// The value is g y with y³ - 3y = 2x, x = cos 3θ of the Lode angle, y from √3 to 2. The start is within 0.002, and the
-	// slope is at least 6, so three Newton steps reach rounding.
+func (a Sym) distinctValue() float64 {
+	xx, yy, zz, yz, xz, xy := a[XX], a[YY], a[ZZ], a[YZ], a[XZ], a[XY]
+	j2 := 0.5*(xx*xx+yy*yy+zz*zz) + yz*yz + xz*xz + xy*xy
+	j3 := xx*(yy*zz-yz*yz) + xy*(yz*xz-xy*zz) + xz*(xy*yz-yy*xz)
+	g := math.Sqrt(j2 * (1. / 3))
+	// The value is g y with y³ - 3y = 2x; x is the cosine of three times the Lode angle and y runs from √3 to 2. The cubic
+	// start (interpolation at Chebyshev points) is within 1e-4 and the slope at least 6: two Newton steps reach rounding.
 	x := min(math.Abs(j3)/(2*g*g*g), 1)
-	y := math.Sqrt(3) + x*(1./3-x*0.0653841)
-	for range 3 {
-		y -= (y*(y*y-3) - 2*x) / (3 * (y*y - 1))
-	}
+	y := 1.73213266 + x*(0.3306607+x*(-0.0813824+x*0.0186394))
+	y -= (y*(y*y-3) - 2*x) / (3 * (y*y - 1))
+	y -= (y*(y*y-3) - 2*x) / (3 * (y*y - 1))
 	return math.Copysign(g*y, j3)
 }
 
 // eigenvector returns the unit eigenvector of an eigenvalue that is well apart from the others: the longest column of the
-// adjugate of s - eta 1.
-func (s Sym) eigenvector(eta float64) [3]float64 {
-	r0 := [3]float64{s[XX] - eta, s[XY], s[XZ]}
-	r1 := [3]float64{s[XY], s[YY] - eta, s[YZ]}
-	r2 := [3]float64{s[XZ], s[YZ], s[ZZ] - eta}
-	best := cross(r1, r2)
-	if c := cross(r2, r0); dot(c, c) > dot(best, best) {
-		best = c
+// adjugate of a - eta 1.
+func (a Sym) eigenvector(eta float64) vector {
+	r0 := vector{a[XX] - eta, a[XY], a[XZ]}
+	r1 := vector{a[XY], a[YY] - eta, a[YZ]}
+	r2 := vector{a[XZ], a[YZ], a[ZZ] - eta}
+	best := r1.cross(r2)
+	n := best.dot(best)
+	if c := r2.cross(r0); c.dot(c) > n {
+		best, n = c, c.dot(c)
 	}
-	if c := cross(r0, r1); dot(c, c) > dot(best, best) {
-		best = c
+	if c := r0.cross(r1); c.dot(c) > n {
+		best, n = c, c.dot(c)
 	}
-	n := math.Sqrt(dot(best, best))
-	return [3]float64{best[0] / n, best[1] / n, best[2] / n}
+	k := 1 / math.Sqrt(n)
+	return vector{k * best.x, k * best.y, k * best.z}
 }
 
-// perpendicular returns a unit vector perpendicular to a unit vector.
-func perpendicular(x [3]float64) [3]float64 {
-	if math.Abs(x[0]) < math.Abs(x[1]) {
-		n := math.Hypot(x[1], x[2])
-		return [3]float64{0, -x[2] / n, x[1] / n}
-	}
-	n := math.Hypot(x[0], x[2])
-	return [3]float64{x[2] / n, 0, -x[0] / n}
-}
-
-// order puts two values into descending order and turns their directions along, so that the three stay right-handed.
-func order(w *[3]float64, v *[3][3]float64, i, j int) {
-	if w[i] < w[j] {
-		w[i], w[j] = w[j], w[i]
-		d := v[i]
-		v[i], v[j] = v[j], [3]float64{0 - d[0], 0 - d[1], 0 - d[2]} // 0 - 0 is no minus zero
-	}
-}
-
-func combine(k float64, x [3]float64, l float64, y [3]float64) [3]float64 {
-	return [3]float64{k*x[0] + l*y[0], k*x[1] + l*y[1], k*x[2] + l*y[2]}
-}
-
-func dot(x, y [3]float64) float64 { return x[0]*y[0] + x[1]*y[1] + x[2]*y[2] }
-
-func (a Sym) apply(x [3]float64) [3]float64 {
-	return [3]float64{
-		a[XX]*x[0] + a[XY]*x[1] + a[XZ]*x[2],
-		a[XY]*x[0] + a[YY]*x[1] + a[YZ]*x[2],
-		a[XZ]*x[0] + a[YZ]*x[1] + a[ZZ]*x[2],
+func (a Sym) apply(v vector) vector {
+	return vector{
+		a[XX]*v.x + a[XY]*v.y + a[XZ]*v.z,
+		a[XY]*v.x + a[YY]*v.y + a[YZ]*v.z,
+		a[XZ]*v.x + a[YZ]*v.y + a[ZZ]*v.z,
 	}
 }
 
@@ -176,4 +167,29 @@ func (a Sym) ldexp(exponent int) Sym {
 		a[i] = math.Ldexp(a[i], exponent)
 	}
 	return a
+}
+
+// vector is a struct because the compiler keeps small structs in registers, and arrays in memory.
+type vector struct{ x, y, z float64 }
+
+func (v vector) array() [3]float64 { return [3]float64{v.x, v.y, v.z} }
+
+func (v vector) dot(w vector) float64 { return v.x*w.x + v.y*w.y + v.z*w.z }
+
+func (v vector) cross(w vector) vector {
+	return vector{v.y*w.z - v.z*w.y, v.z*w.x - v.x*w.z, v.x*w.y - v.y*w.x}
+}
+
+// perpendicular returns a unit vector perpendicular to the unit vector v.
+func (v vector) perpendicular() vector {
+	if math.Abs(v.x) < math.Abs(v.y) {
+		k := 1 / math.Sqrt(v.y*v.y+v.z*v.z)
+		return vector{0, -k * v.z, k * v.y}
+	}
+	k := 1 / math.Sqrt(v.x*v.x+v.z*v.z)
+	return vector{k * v.z, 0, -k * v.x}
+}
+
+func combine(k float64, v vector, l float64, w vector) vector {
+	return vector{k*v.x + l*w.x, k*v.y + l*w.y, k*v.z + l*w.z}
 }

@@ -119,12 +119,8 @@ func (q Rotation) Check(tol float64) error {
 }
 
 func (q Rotation) determinant() float64 {
-	c := cross(q[0], q[1])
-	return c[0]*q[2][0] + c[1]*q[2][1] + c[2]*q[2][2]
-}
-
-func cross(a, b [3]float64) [3]float64 {
-	return [3]float64{a[1]*b[2] - a[2]*b[1], a[2]*b[0] - a[0]*b[2], a[0]*b[1] - a[1]*b[0]}
+	a, b, c := vector{q[0][0], q[0][1], q[0][2]}, vector{q[1][0], q[1][1], q[1][2]}, vector{q[2][0], q[2][1], q[2][2]}
+	return a.cross(b).dot(c)
 }
 
 // Rotate returns q a qᵀ: the tensor turned by q, or its components in the frame whose axes are the rows of q.

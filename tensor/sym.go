@@ -82,8 +82,11 @@ func (a Sym) Mises() float64 {
 
 // EquivalentStrain returns the von Mises equivalent of a strain, √(2/3 e:e) with e the deviator. For the creep strain of
 // a bar in tension, whose volume does not change, it is the axial creep strain; in pure shear it is the engineering shear
-// divided by √3. It equals two thirds of Mises, and has its accuracy and range.
-func (a Sym) EquivalentStrain() float64 { return a.Mises() * (2. / 3) }
+// divided by √3. It is two thirds of what Mises gives for the same components, and has its accuracy and range.
+func (a Sym) EquivalentStrain() float64 {
+	p, q, r := a[XX]-a[YY], a[YY]-a[ZZ], a[ZZ]-a[XX]
+	return math.Sqrt((2*(p*p+q*q+r*r) + 12*(a[YZ]*a[YZ]+a[XZ]*a[XZ]+a[XY]*a[XY])) / 9)
+}
 
 // IsFinite reports whether no component is NaN or infinite.
 func (a Sym) IsFinite() bool {
