@@ -1,0 +1,244 @@
+package integrate
+
+import (
+	"math"
+
+	"example.com/holdtime/creeplaw"
+)
+
+// relaxation is the scalar problem the 3-D step reduces to. With isotropic elasticity the end deviator is parallel to the
+// trial deviator, so one number is unknown: the fraction u of the trial deviatoric elastic strain that creeps away,
+//
+//	u = 3G Δp/q,   σ = (1-u) q,   p = p₀ + u q/3G.
+//
+// The residual is taken in logarithms and in the variable z = ln[u/(1-u)],
+//
+//	F(z) = ln u - ln(Δt/(q/3G)) - ln ṗ(σ, p, T)
+//
+// because F is then smooth and, for a law that rises with stress and does not soften, increasing everywhere, with the slope
+// 1 + hardening where little relaxes (z → -∞) and the stress exponent n where nearly all does (z → +∞). One variable serves
+// both regimes, and neither u nor 1-u loses digits.
+type relaxation struct {
+	law         creeplaw.Logarithmic
+	trial       float64 // q: von Mises stress of the trial state
+	elastic     float64 // q/3G: its equivalent elastic strain
+	start       float64 // p₀: equivalent creep strain at the start
+	temperature float64
+	logTime     float64 // ln(Δt/(q/3G))
+}
+
+// relaxed is the solution of a relaxation.
+type relaxed struct {
+	fraction   float64          // u
+	kept       float64          // r = 1-u
+	strain     float64          // p at the end
+	rate       creeplaw.LogRate // the law at the end
+	iterations int
+	residual   float64 // |F| at the last evaluation of the law
+}
+
+const (
+	epsilon       = 0x1p-52
+	maxIterations = 60
+	// tolerance on F: the relative error of Δp left by the iteration in the worst case. Usually it stops at rounding.
+	tolerance = 1e-12
+	// negligible is the ln u below which the creep increment is beneath all float64 arithmetic on the trial strain.
+	negligible = -640
+)
+
+// solve finds the root of F. It returns zero or the code of the failure.
+func (a *relaxation) solve() (relaxed, Code) {
+	first := a.law.LogRate(creeplaw.Point{Stress: a.trial, Strain: a.start, Temperature: a.temperature})
+	switch {
+	case math.IsNaN(first.Value):
+		return relaxed{}, LawUndefined
+	case math.IsInf(first.Value, -1):
+		return a.unrelaxed(first), 0
+	case first.ByLogStrain > 0:
+		return a.solveSoftening(first)
+	}
+	level, slope := a.logTime+first.Value, 1.0
+	switch hardening := -first.ByLogStrain; {
+	case math.IsInf(first.Value, 1): // hardening from zero strain: look from the largest strain the step could reach
+		first = a.law.LogRate(creeplaw.Point{Stress: a.trial, Strain: a.start + a.elastic, Temperature: a.temperature})
+		if !finite(first.Value) {
+			return relaxed{}, LawUndefined
+		}
+		slope = 1 - math.Min(first.ByLogStrain, 0)
+		level = (a.logTime + first.Value) / slope
+	case hardening > 0 && a.start < a.elastic: // the strain of the step may outgrow the strain before it
+		if l := (level - hardening*math.Log(a.elastic/a.start)) / (1 + hardening); l < level {
+			level, slope = l, 1+hardening
+		}
+	}
+	if level < negligible {
+		return a.unrelaxed(first), 0
+	}
+	return a.iterate(first, firstGuess(level, math.Max(first.ByLogStress, 0)/slope))
+}
+
+func (a *relaxation) unrelaxed(rate creeplaw.LogRate) relaxed {
+	return relaxed{kept: 1, strain: a.start, rate: rate}
+}
+
+// firstGuess solves z + (n-1) softplus(z) = level, the problem of a power law without memory, approximately: softplus is
+// replaced by the hyperbola with the same asymptotes, which leaves a quadratic equation. Exact far from the corner.
+func firstGuess(level, n float64) float64 {
+	if n == 0 {
+		return level // a law that does not feel the stress: u/(1-u) = D is as good as any start
+	}
+	const corner = 1.9 // (2 ln 2)² would meet softplus at z = 0; this value minimises the iterations over n = 1 … 50
+	return ((n+1)*level - (n-1)*math.Sqrt(level*level+n*corner)) / (2 * n)
+}
+
+// iterate runs the safeguarded third-order iteration from z.
+func (a *relaxation) iterate(first creeplaw.LogRate, z float64) (relaxed, Code) {
+	odds := math.Exp(z) // u/(1-u)
+	low, high := 0.0, math.Inf(1)
+	before, beforeLog := first, 0.0 // the previous evaluation, at ln(1-u) = beforeLog
+	var x relaxed
+	for small := false; x.iterations <= maxIterations; x.iterations++ {
+		f, logFraction := a.evaluate(&x, odds)
+		size := math.Abs(f)
+		switch {
+		case math.IsNaN(f):
+			return x, LawUndefined
+		case size <= epsilon*(math.Abs(logFraction)+math.Abs(a.logTime)+math.Abs(x.rate.Value)), small && size <= tolerance:
+			return x, 0
+		case f < 0:
+			low = odds
+		default:
+			high = odds
+		}
+		step := math.Inf(1)
+		if finite(f) {
+			logKept := logFraction - z
+			step = a.step(&x, f, curvatureOfLaw(x.rate.ByLogStress, before.ByLogStress, logKept-beforeLog))
+			small = math.Abs(step) < 1e-4
+			if small && x.rate.ByLogStress == before.ByLogStress && x.rate.ByLogStrain == before.ByLogStrain {
+				// A power law between the last two points: the third-order step leaves less than |step|³.
+				if rest := math.Abs(step * step * step); rest <= tolerance/8 {
+					x.iterations++
+					x.residual = rest
+					a.place(&x, odds*exponential(step))
+					return x, 0
+				}
+			}
+			before, beforeLog = x.rate, logKept
+		}
+		odds, z = advance(odds, z, step, low, high)
+		if odds == low || odds == high { // neighbouring numbers bracket the root
+			return x, settled(size)
+		}
+	}
+	return x, NoConvergence
+}
+
+// settled accepts a root that the number system cannot resolve further only if it meets the tolerance.
+func settled(size float64) Code {
+	if size <= tolerance {
+		return 0
+	}
+	return NoConvergence
+}
+
+// place sets the unknowns from the odds u/(1-u).
+func (a *relaxation) place(x *relaxed, odds float64) {
+	x.kept = 1 / (1 + odds)
+	x.fraction = odds * x.kept
+	if odds > 1e300 {
+		x.fraction = 1
+	}
+	x.strain = a.start + x.fraction*a.elastic
+}
+
+// evaluate sets the unknowns from the odds, asks the law and returns F and ln u.
+func (a *relaxation) evaluate(x *relaxed, odds float64) (f, logFraction float64) {
+	a.place(x, odds)
+	x.rate = a.law.LogRate(creeplaw.Point{Stress: x.kept * a.trial, Strain: x.strain, Temperature: a.temperature})
+	logFraction = math.Log(x.fraction)
+	f = logFraction - a.logTime - x.rate.Value
+	x.residual = math.Abs(f)
+	return f, logFraction
+}
+
+// slope is dF/dz: (1-u)(1 + hardening) + u n, with the hardening seen by the increment.
+func (a *relaxation) slope(x *relaxed) float64 {
+	return x.kept*a.stiffening(x) + x.fraction*x.rate.ByLogStress
+}
+
+// stiffening is d(ln u - ln ṗ)/d ln u at fixed stress: 1 - (∂ln ṗ/∂ln p) Δp/p.
+func (a *relaxation) stiffening(x *relaxed) float64 {
+	return 1 - x.rate.ByLogStrain*a.share(x)
+}
+
+// share is Δp/p, the part of the accumulated creep strain that this step adds.
+func (a *relaxation) share(x *relaxed) float64 {
+	if a.start == 0 {
+		return 1
+	}
+	return x.fraction * a.elastic / x.strain
+}
+
+// step is the change of z that solves the local model F(z+δ) = F + F'·(e^(cδ)-1)/c, c = F”/F', which is exact for a power
+// law at both ends and for an exponential of stress: Newton's step with a factor that makes it third order.
+func (a *relaxation) step(x *relaxed, f, lawCurvature float64) float64 {
+	u, r, share := x.fraction, x.kept, a.share(x)
+	hardening := -x.rate.ByLogStrain
+	slope := a.slope(x)
+	if !(slope > 0) {
+		return math.Copysign(math.Inf(1), -f) // no direction to trust: let the bracket decide
+	}
+	second := u*r*(x.rate.ByLogStress-1-hardening*share) + hardening*share*(1-share)*r*r - u*u*lawCurvature
+	newton := -f / slope
+	t := -newton * second / slope // F F”/F'²
+	switch {
+	case math.Abs(t) < 0.25:
+		return newton / (1 - t*(0.5+t*(1.0/12+t/24)))
+	case t > 0.95:
+		t = 0.95
+	}
+	return -newton * math.Log1p(-t) / t
+}
+
+// curvatureOfLaw estimates dn/d ln σ from the exponents at two stresses, exact for a power law and an exponential.
+func curvatureOfLaw(n, before, logRatio float64) float64 {
+	change := n - before
+	if change == 0 || logRatio == 0 {
+		return 0
+	}
+	if math.Abs(change) < 0.1*before || !(n > 0 && before > 0) {
+		return change / logRatio
+	}
+	return n * math.Log(n/before) / logRatio
+}
+
+// advance moves by a step in z, inside the bracket of odds.
+func advance(odds, z, step, low, high float64) (nextOdds, nextZ float64) {
+	const longest = 30
+	if math.Abs(step) > longest {
+		step = math.Copysign(longest, step)
+	}
+	next := odds * exponential(step)
+	if next > low && next < high {
+		return next, z + step
+	}
+	switch {
+	case low == 0:
+		next = high * math.Exp(-2)
+	case math.IsInf(high, 1):
+		next = low * math.Exp(2)
+	default:
+		next = math.Sqrt(low) * math.Sqrt(high)
+	}
+	return next, math.Log(next)
+}
+
+// exponential is e^x, by a rational form good to rounding of the small steps that most often come.
+func exponential(x float64) float64 {
+	if math.Abs(x) > 0.01 {
+		return math.Exp(x)
+	}
+	s := 12 + x*x
+	return (s + 6*x) / (s - 6*x) // Padé [2/2], error x⁵/720
+}
