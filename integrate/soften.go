@@ -16,7 +16,7 @@ func (a *relaxation) solveSoftening(first creeplaw.LogRate) (relaxed, Code) {
 		return a.unrelaxed(first), 0
 	}
 	// Without softening the root lies to the left; there F cannot be positive.
-	z := firstGuess(level, math.Max(first.ByLogStress, 1))
+	z := math.Log(firstGuess(level, math.Max(first.ByLogStress, 1)))
 	var x relaxed
 	for range 4 { // the guess is approximate: step back until F is negative
 		if f, _ := a.evaluate(&x, math.Exp(z)); math.IsNaN(f) {
@@ -33,7 +33,7 @@ func (a *relaxation) solveSoftening(first creeplaw.LogRate) (relaxed, Code) {
 		switch {
 		case math.IsNaN(f):
 			return x, LawUndefined
-		case math.Abs(f) <= epsilon*(math.Abs(logFraction)+math.Abs(a.logTime)+math.Abs(x.rate.Value)):
+		case math.Abs(f) <= a.rounding(&x, logFraction):
 			return x, 0
 		case f > 0:
 			return a.finishSoftening(x, z)
@@ -57,7 +57,7 @@ func (a *relaxation) finishSoftening(x relaxed, high float64) (relaxed, Code) {
 		if math.IsNaN(f) {
 			return x, LawUndefined
 		}
-		if math.Abs(f) <= epsilon*(math.Abs(logFraction)+math.Abs(a.logTime)+math.Abs(x.rate.Value)) {
+		if math.Abs(f) <= a.rounding(&x, logFraction) {
 			return x, 0
 		}
 		if f > 0 {

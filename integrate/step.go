@@ -43,15 +43,9 @@ func (m *Material) Step(out *Result, old *State, inc Increment) error {
 }
 
 func (m *Material) step(out *Result, old *State, inc *Increment) Code {
-	if !inc.valid() {
-		return BadIncrement
-	}
-	if !old.valid() {
-		return BadState
-	}
 	t, ok := m.trialState(old, inc)
-	if !ok {
-		return OutsideTable
+	if !(ok && inc.Dt >= 0 && inc.Temperature > 0 && old.Equivalent >= 0 && finite(inc.Dt+inc.Temperature+old.Equivalent)) {
+		return refusal(old, inc)
 	}
 	x := relaxed{kept: 1, strain: old.Equivalent}
 	problem := relaxation{law: m.law, trial: 3 * t.shear * t.equivalent, elastic: t.equivalent, start: old.Equivalent,
@@ -95,7 +89,20 @@ func (m *Material) trialState(old *State, inc *Increment) (t trial, ok bool) {
 		t.volumetric -= 3 * free
 		t.expansion = byT
 	}
-	return t, t.bulk > 0 && t.shear > 0 && finite(t.volumetric)
+	return t, t.bulk > 0 && t.shear > 0 && finite(t.volumetric+t.equivalent)
+}
+
+// refusal finds the code for a step whose trial state is not a number to work with.
+func refusal(old *State, inc *Increment) Code {
+	switch {
+	case !inc.valid():
+		return BadIncrement
+	case !old.valid():
+		return BadState
+	case !finite(inc.Strain.Sub(old.Creep).Norm()): // finite components whose squares overflow
+		return BadIncrement
+	}
+	return OutsideTable
 }
 
 func (inc *Increment) valid() bool {
