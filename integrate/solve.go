@@ -41,7 +41,7 @@ const (
 	epsilon       = 0x1p-52
 	maxIterations = 60
 	// tolerance on F: the relative error of Δp left by the iteration in the worst case. Usually it stops at rounding.
-	tolerance = 1e-12
+	tolerance = 2e-13
 	// negligible is the ln u below which the creep increment is beneath all float64 arithmetic on the trial strain.
 	negligible = -640
 )
@@ -121,10 +121,19 @@ func roughLog1p(x float64) float64 {
 	return x * (60 + x*(60+x*11)) / (60 + x*(90+x*(36+x*3)))
 }
 
+// bound is one end of the bracket: where F was evaluated, and where it pointed.
+type bound struct {
+	odds  float64 // u/(1-u)
+	f     float64 // F there
+	slope float64 // dF/dz there
+	step  float64 // the step of the model there, without the law's curvature
+}
+
 // iterate runs the safeguarded third-order iteration from the odds u/(1-u).
 func (a *relaxation) iterate(first creeplaw.LogRate, odds float64) (relaxed, Code) {
-	low, high := 0.0, math.Inf(1)
+	low, high := bound{}, bound{odds: math.Inf(1)}
 	before, beforeOdds := first, 0.0 // the previous evaluation
+	last, stalls := math.Inf(1), 0   // its |F|, and how often in a row that was not halved
 	var x relaxed
 	for small := false; x.iterations <= maxIterations; x.iterations++ {
 		f, logFraction := a.evaluate(&x, odds)
@@ -134,38 +143,81 @@ func (a *relaxation) iterate(first creeplaw.LogRate, odds float64) (relaxed, Cod
 			return x, LawUndefined
 		case size <= a.rounding(&x, logFraction), small && size <= tolerance:
 			return x, 0
-		case f < 0:
-			low = odds
+		}
+		step := a.step(&x, f, 0)
+		if end := (bound{odds, f, a.slope(&x), step}); f < 0 {
+			low = end
+		} else {
+			high = end
+		}
+		sameLaw := x.rate.ByLogStress == before.ByLogStress && x.rate.ByLogStrain == before.ByLogStrain
+		small = math.Abs(step) < 1e-4
+		if small && sameLaw {
+			// A power law between the last two points: the third-order step leaves less than |step|³.
+			if rest := math.Abs(step * step * step); rest <= tolerance {
+				x.iterations++
+				x.residual = rest
+				a.place(&x, odds*exponential(step))
+				return x, 0
+			}
+		}
+		if stalls++; size < last/2 || last == 0 {
+			stalls = 0
+		}
+		from := &low
+		if f > 0 {
+			from = &high
+		}
+		next := 0.0
+		switch bracketed := low.odds > 0 && !math.IsInf(high.odds, 1); {
+		case bracketed && (stalls > 0 || corner(&low, &high, from) != from):
+			next = between(&low, &high, from, stalls)
+		case !sameLaw && finite(step):
+			step = a.step(&x, f, curvatureOfLaw(x.rate.ByLogStress, before.ByLogStress, math.Log((1+beforeOdds)/(1+odds))))
+			fallthrough
 		default:
-			high = odds
+			next = advance(odds, step, low.odds, high.odds)
 		}
-		step := math.Inf(1)
-		if finite(f) {
-			sameLaw := x.rate.ByLogStress == before.ByLogStress && x.rate.ByLogStrain == before.ByLogStrain
-			curvature := 0.0
-			if !sameLaw {
-				curvature = curvatureOfLaw(x.rate.ByLogStress, before.ByLogStress, math.Log((1+beforeOdds)/(1+odds)))
-			}
-			step = a.step(&x, f, curvature)
-			small = math.Abs(step) < 1e-4
-			if small && sameLaw {
-				// A power law between the last two points: the third-order step leaves less than |step|³.
-				if rest := math.Abs(step * step * step); rest <= tolerance/8 {
-					x.iterations++
-					x.residual = rest
-					a.place(&x, odds*exponential(step))
-					return x, 0
-				}
-			}
-			before, beforeOdds = x.rate, odds
-		}
-		next := advance(odds, step, low, high)
-		if next == odds || next == low || next == high { // neighbouring numbers bracket the root
+		if next == odds || next == low.odds || next == high.odds { // neighbouring numbers bracket the root
 			return x, settled(size)
 		}
-		odds = next
+		last, before, beforeOdds, odds = size, x.rate, odds, next
 	}
 	return x, NoConvergence
+}
+
+// corner says which end of the bracket sees the root. Where two laws act together F is nearly two straight lines; the sign
+// of F where the tangents of the ends meet tells on which of them the root lies. Where it cannot tell it returns the end
+// evaluated last.
+func corner(low, high, last *bound) *bound {
+	const alike = 1.5 // slopes within this ratio make no corner
+	if low.slope < alike*high.slope && high.slope < alike*low.slope {
+		return last
+	}
+	width := math.Log(high.odds / low.odds)
+	meet := (high.f - low.f - high.slope*width) / (low.slope - high.slope) // distance in z from the low end
+	switch {
+	case !(meet > 0 && meet < width):
+		return last
+	case low.f+low.slope*meet > 0:
+		return low
+	}
+	return high
+}
+
+// between chooses a point inside the bracket when the models of law and solution threw the iteration to the far side of a
+// corner between laws: first from the end that sees the root, then on the chord, and then by halving the bracket.
+func between(low, high, last *bound, stalls int) float64 {
+	from := corner(low, high, last)
+	step := from.step
+	from.step = math.NaN() // a second time it would lead to the same point
+	switch {
+	case stalls == 2:
+		from, step = low, math.Log(high.odds/low.odds)*low.f/(low.f-high.f)
+	case stalls > 2:
+		step = math.NaN()
+	}
+	return advance(from.odds, step, low.odds, high.odds)
 }
 
 // settled accepts a root that the number system cannot resolve further only if it meets the tolerance.
@@ -226,7 +278,7 @@ func (a *relaxation) step(x *relaxed, f, lawCurvature float64) float64 {
 	hardening := -x.rate.ByLogStrain
 	slope := a.slope(x)
 	if !(slope > 0) {
-		return math.Copysign(math.Inf(1), -f) // no direction to trust: let the bracket decide
+		return math.NaN() // no direction to trust: let the bracket decide
 	}
 	second := u*r*(x.rate.ByLogStress-1-hardening*share) + hardening*share*(1-share)*r*r - u*u*lawCurvature
 	newton := -f / slope
@@ -252,15 +304,13 @@ func curvatureOfLaw(n, before, logRatio float64) float64 {
 	return n * math.Log(n/before) / logRatio
 }
 
-// advance moves by a step in z, inside the bracket of odds.
+// advance moves by a step in z, inside the bracket of odds; without a step (NaN) it halves the bracket or looks further out.
 func advance(odds, step, low, high float64) float64 {
-	const longest = 30
-	if math.Abs(step) > longest {
-		step = math.Copysign(longest, step)
-	}
+	const longest = 300 // keeps the exponential finite
+	step = math.Max(-longest, math.Min(longest, step))
 	next := odds * exponential(step)
 	switch {
-	case next > low && next < high, next == odds:
+	case next > low && next < high && finite(next), next == odds:
 		return next
 	case low == 0:
 		return high * math.Exp(-2)
