@@ -31,7 +31,7 @@ func (s Shear) String() string {
 //
 // Host and library round trips are exact to the bit; the one exception is named at StrainIn. The zero value is the
 // order of Sym with tensor shear. A Layout is a small value without pointers: copy it, compare it with ==, share it between
-// goroutines. No method allocates, and no method keeps or changes the slice it reads.
+// goroutines. No method but Components allocates, and none keeps or changes the slice it reads.
 //
 // Every slice must have exactly the length that the method states; another length is a bug of the caller and panics with
 // a message that starts with "tensor: ". NaN and infinities pass through.
@@ -48,10 +48,22 @@ func (l Layout) Len() int { return 6 - int(l.missing) }
 // Shear returns the convention of the layout's shear strains.
 func (l Layout) Shear() Shear { return l.shear }
 
+// Components returns the names of the components in the host's order, such as "xx yy zz xy", always in the letters x, y, z.
+// NewLayout(l.Components(), l.Shear()) is l again.
+func (l Layout) Components() string {
+	names := make([]string, l.Len())
+	for i := range names {
+		names[i] = componentNames[l.component(i)]
+	}
+	return strings.Join(names, " ")
+}
+
+var componentNames = [6]string{"xx", "yy", "zz", "yz", "xz", "xy"}
+
 // StrainIn reads a host's strain of length Len. Components that the layout lacks are zero.
 //
-// Engineering shear is halved, which is exact except for numbers below 2^-1021 (4.5e-308): there the last bit may be lost,
-// an error of at most 2.5e-324, to even.
+// Engineering shear is halved. That is exact for every number of magnitude 2^-1021 (4.5e-308) or more; below, where float64
+// runs out of bits, an odd last bit is rounded to even, and such a strain may come out again changed by 5e-324.
 func (l Layout) StrainIn(host []float64) Sym {
 	if len(host) != l.Len() {
 		panicLength("StrainIn", len(host), l.Len())
@@ -122,15 +134,18 @@ func (l Layout) TangentOut(dst []float64, c *Tangent) {
 	if len(dst) != n*n {
 		panicLength("TangentOut", len(dst), n*n)
 	}
+	var column [6]int
+	var factor [6]float64
+	for j := range n {
+		column[j], factor[j] = l.component(j), 1
+		if column[j] > ZZ && l.shear == TensorShear {
+			factor[j] = 2
+		}
+	}
 	for i := range n {
-		row := &c[l.component(i)]
-		for j := range n {
-			k := l.component(j)
-			v := row[k]
-			if k > ZZ && l.shear == TensorShear {
-				v *= 2
-			}
-			dst[i*n+j] = v
+		row, out := &c[column[i]], dst[i*n:i*n+n]
+		for j := range out {
+			out[j] = factor[j] * row[column[j]]
 		}
 	}
 }

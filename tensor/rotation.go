@@ -14,13 +14,13 @@ type Rotation [3][3]float64
 func IdentityRotation() Rotation { return Rotation{{1, 0, 0}, {0, 1, 0}, {0, 0, 1}} }
 
 // AxisAngle returns the rotation by an angle in radians about an axis, counter-clockwise seen against the axis
-// (right-hand rule). The axis may have any length but zero.
+// (right-hand rule). The axis may have any finite length but zero.
 //
 // A zero axis, or one with a NaN or infinite component, gives an *AxisError. An angle that is NaN or infinite gives an
 // *AngleError.
 func AxisAngle(axis [3]float64, angle float64) (Rotation, error) {
-	u, length := unitVector(axis)
-	if !(length > 0) || math.IsInf(length, 1) {
+	u, length, ok := unitVector(axis)
+	if !ok || length == 0 {
 		return Rotation{}, &AxisError{Axis: axis}
 	}
 	if math.IsNaN(angle) || math.IsInf(angle, 0) {
@@ -30,14 +30,15 @@ func AxisAngle(axis [3]float64, angle float64) (Rotation, error) {
 }
 
 // RotationVector returns the rotation about the direction of w by its length in radians, such as a spin times a time
-// increment. The zero vector gives the identity; a NaN or infinite component gives an *AxisError.
+// increment. The zero vector gives the identity; a NaN or infinite component, or a length beyond the range of float64, gives
+// an *AxisError.
 func RotationVector(w [3]float64) (Rotation, error) {
-	u, length := unitVector(w)
+	u, length, ok := unitVector(w)
 	switch {
+	case !ok || math.IsInf(length, 1):
+		return Rotation{}, &AxisError{Axis: w}
 	case length == 0:
 		return IdentityRotation(), nil
-	case math.IsNaN(length) || math.IsInf(length, 1):
-		return Rotation{}, &AxisError{Axis: w}
 	}
 	return axisAngle(u, length), nil
 }
@@ -55,16 +56,20 @@ func axisAngle(u [3]float64, angle float64) Rotation {
 	}
 }
 
-// unitVector returns v/|v| and |v|, for any finite v without overflow of the squares. A zero v comes back as it is.
-func unitVector(v [3]float64) ([3]float64, float64) {
+// unitVector returns v/|v| and |v|, of any finite v without overflow of the squares; |v| itself may overflow. A zero v comes
+// back as it is, and ok is false when a component is not finite.
+func unitVector(v [3]float64) (unit [3]float64, length float64, ok bool) {
 	m := max(math.Abs(v[0]), math.Abs(v[1]), math.Abs(v[2]))
-	if m == 0 || math.IsNaN(m) || math.IsInf(m, 1) {
-		return v, m
+	if !(m <= math.MaxFloat64) {
+		return v, m, false
+	}
+	if m == 0 {
+		return v, 0, true
 	}
 	_, e := math.Frexp(m)
 	x, y, z := math.Ldexp(v[0], -e), math.Ldexp(v[1], -e), math.Ldexp(v[2], -e)
 	n := math.Sqrt(x*x + y*y + z*z)
-	return [3]float64{x / n, y / n, z / n}, math.Ldexp(n, e)
+	return [3]float64{x / n, y / n, z / n}, math.Ldexp(n, e), true
 }
 
 // Transpose returns the transpose, which for a rotation is its inverse.
@@ -97,7 +102,7 @@ func (q Rotation) Apply(v [3]float64) [3]float64 {
 }
 
 // Check returns a *RotationError unless every component of q qᵀ - 1 is at most tol in magnitude and the determinant is
-// positive. The components of a rotation are numbers of order one, so tol is relative and absolute at once: 1e-15 is
+// positive. The components of a rotation are numbers of order one, so tol is relative and absolute at once: 1e-14 is
 // rounding, 1e-6 a matrix that was written to a text file. A NaN anywhere, tol included, is an error.
 func (q Rotation) Check(tol float64) error {
 	p := q.Mul(q.Transpose())

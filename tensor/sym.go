@@ -50,7 +50,7 @@ func (a Sym) Mean() float64 { return (a[XX] + a[YY] + a[ZZ]) / 3 }
 //
 // The normal components are formed from differences, s_xx = ((xx - yy) + (xx - zz))/3, so a large mean stress costs no
 // digits beyond those it took from the components of a, and equal normal components give exact zeros. The trace of the
-// result is zero to rounding of the deviator itself.
+// result is zero to rounding of the deviator itself. Normal components further apart than about 4e307 overflow.
 func (a Sym) Deviator() Sym {
 	p, q, r := a[XX]-a[YY], a[YY]-a[ZZ], a[ZZ]-a[XX]
 	return Sym{(p - r) / 3, (q - p) / 3, (r - q) / 3, a[YZ], a[XZ], a[XY]}
@@ -103,7 +103,8 @@ func (a Sym) Matrix() [3][3]float64 {
 }
 
 // SymFromMatrix returns the symmetric part (m + mᵀ)/2. The antisymmetric part, a spin, is dropped without notice; a
-// matrix that is already symmetric comes back bit for bit, unless it holds infinities, whose difference is NaN.
+// matrix that is already symmetric comes back bit for bit, unless it holds infinities, whose difference is NaN. A difference
+// of two opposite components beyond 9e307 overflows.
 func SymFromMatrix(m [3][3]float64) Sym {
 	return Sym{m[0][0], m[1][1], m[2][2], mean(m[1][2], m[2][1]), mean(m[0][2], m[2][0]), mean(m[0][1], m[1][0])}
 }

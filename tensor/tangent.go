@@ -93,13 +93,7 @@ func (c *Tangent) Asymmetry() float64 {
 		}
 		size = max(size, math.Abs(c[i][i]))
 	}
-	if size == 0 {
-		return 0
-	}
-	if math.IsInf(size, 1) {
-		return math.NaN()
-	}
-	return worst / size
+	return relativeTo(size, worst)
 }
 
 // IsSymmetric reports whether Asymmetry is at most tol: 0 asks for equality to the bit, 1e-14 allows rounding. A component
