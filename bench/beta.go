@@ -4,7 +4,7 @@ import "math"
 
 // incompleteBeta is the integral to which primary creep and constant-rate tension lead,
 //
-//	I(w) = a ∫₀ʷ v^(a-1) (1-v)^(-b) dv,   a > 0, b ≥ 0, 0 ≤ w < 1,
+//	I(w) = a ∫₀ʷ v^(a-1) (1-v)^(-b) dv,   a > 0, b ≥ 1, 0 ≤ w < 1,
 //
 // an incomplete beta function whose second parameter 1-b is not positive. It is kept as ln I over z = ln[w/(1-w)]: that
 // curve is smooth and rising, with slope a for z → -∞ and b-1 (at least 0) for z → +∞.
@@ -36,44 +36,41 @@ func (i incompleteBeta) kernel(x float64) float64 {
 	return sum * spacing
 }
 
-// odds returns z = ln[w/(1-w)] at which ln I has the given value, +Inf where I never gets there or w is 1 to rounding.
+// farthest is the odds' logarithm beyond which w or 1-w leaves the range of a float64.
+const farthest = 700
+
+// odds returns z = ln[w/(1-w)] at which ln I has the given value, +Inf where I never gets there or 1-w vanishes.
+//
+// ln I bends one way only, from slope a to slope b-1. Newton's iteration from the asymptote on the far side of the bend
+// approaches the root from that side and never passes it; the count only bounds the wait at rounding.
 func (i incompleteBeta) odds(logValue float64) float64 {
-	const farthest = 700 // e^±700 is still a float64
-	switch {
-	case math.IsNaN(logValue):
-		return logValue
-	case logValue/i.a < -farthest: // so early that I = wᵃ
-		return logValue / i.a
-	}
-	low, high := -farthest-50., float64(farthest)
-	if v, _ := i.log(high); v < logValue {
-		return math.Inf(1)
-	}
-	z := i.firstGuess(logValue, high)
-	for range 200 {
+	z := i.firstGuess(logValue)
+	for range 100 {
+		switch {
+		case math.IsNaN(z), z < -farthest: // so early that I = wᵃ
+			return z
+		case z > farthest:
+			return math.Inf(1)
+		}
 		v, slope := i.log(z)
-		if v < logValue {
-			low = z
-		} else {
-			high = z
+		step := (v - logValue) / slope
+		z -= step
+		if math.Abs(step) <= 0x1p-51*(1+math.Abs(z)) {
+			break
 		}
-		next := z - (v-logValue)/slope
-		if !(next > low && next < high) {
-			next = low + (high-low)/2
-		}
-		if math.Abs(next-z) <= 0x1p-50*(1+math.Abs(z)) {
-			return next
-		}
-		z = next
 	}
 	return z
 }
 
-// firstGuess is where the nearer of the two asymptotes passes the value.
-func (i incompleteBeta) firstGuess(logValue, most float64) float64 {
-	z := logValue / i.a
-	if late := (logValue - math.Log(i.a/(i.b-1))) / (i.b - 1); i.b > 1 && late > 0 {
-		z = math.Min(z, late)
+// firstGuess is where the later of the two asymptotes passes the value, the earlier if ln I bends upwards.
+func (i incompleteBeta) firstGuess(logValue float64) float64 {
+	early := logValue / i.a
+	if !(i.b > 1) {
+		return early
 	}
-	return math.Min(math.Max(z, -most), most)
+	late := (logValue - math.Log(i.a/(i.b-1))) / (i.b - 1)
+	if i.b-1 > i.a {
+		return math.Min(early, late)
+	}
+	return math.Max(early, late)
 }

@@ -45,7 +45,7 @@ func Halve(exact []float64, scale float64, first, halvings int, routine func(ste
 		return Study{}, &StudyError{Reason: "no exact value is given"}
 	case !(scale > 0) || math.IsInf(scale, 1):
 		return Study{}, &StudyError{Reason: fmt.Sprintf("the scale is %v, must be positive and finite", scale)}
-	case first < 1 || halvings < 0 || halvings > 30:
+	case first < 1 || halvings < 0 || halvings > 30 || first > math.MaxInt>>halvings:
 		return Study{}, &StudyError{Reason: fmt.Sprintf("%d first steps and %d halvings", first, halvings)}
 	}
 	s := Study{Exact: append([]float64(nil), exact...), Scale: scale}
@@ -113,8 +113,13 @@ func (s Study) Extrapolated() []float64 {
 	return table[len(table)-1]
 }
 
-// ExtrapolatedError returns the greatest |extrapolated - exact|/scale.
-func (s Study) ExtrapolatedError() float64 { return s.distance(s.Extrapolated()) }
+// ExtrapolatedError returns the greatest |extrapolated - exact|/scale; NaN for an empty study.
+func (s Study) ExtrapolatedError() float64 {
+	if len(s.Values) == 0 {
+		return math.NaN()
+	}
+	return s.distance(s.Extrapolated())
+}
 
 // String returns the study as a table of steps, errors and observed orders, with the error of the extrapolated result.
 func (s Study) String() string {
