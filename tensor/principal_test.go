@@ -250,6 +250,25 @@ func TestPrincipalRange(t *testing.T) {
 	}
 }
 
+// TestPrincipalScales: a power of two multiplies the values and leaves the directions, to the bit, wherever the squares
+// and cubes on the way need a scale of their own.
+func TestPrincipalScales(t *testing.T) {
+	r, cases := source(t, 9, 2000)
+	for range cases {
+		var a tensor.Sym
+		for i := range a {
+			a[i] = math.Ldexp(r.NormFloat64(), r.IntN(20)) // one component may dominate
+		}
+		values, directions := a.Principal()
+		exponent := r.IntN(1900) - 900 // up to the greatest number
+		got, same := scaleByPowerOfTwo(a, exponent).Principal()
+		for i := range values {
+			require.Equal(t, math.Ldexp(values[i], exponent), got[i], "a = %v, exponent %d", a, exponent)
+		}
+		require.Equal(t, directions, same, "a = %v, exponent %d", a, exponent)
+	}
+}
+
 // TestPrincipalNotFinite: one bad component makes every result NaN.
 func TestPrincipalNotFinite(t *testing.T) {
 	for i := range 6 {
