@@ -47,7 +47,7 @@ func TestEstimateIsTheError(t *testing.T) {
 		inc.Dt = e.Dt
 		e, err = m.EstimateStep(&out, &integrate.State{}, integrate.Conditions{Strain: strain, Temperature: 800}, inc, tolerance)
 		require.NoError(t, err)
-		achieved := math.Abs(held(mises, a, n, e.Dt) - mustStep(t, m, strain, e.Dt).Stress.Mises()) / mises
+		achieved := math.Abs(held(mises, a, n, e.Dt)-mustStep(t, m, strain, e.Dt).Stress.Mises()) / mises
 		require.LessOrEqual(t, achieved, tolerance)
 		require.GreaterOrEqual(t, achieved, tolerance/2)
 	}

@@ -141,6 +141,8 @@ func (a *relaxation) iterate(first creeplaw.LogRate, odds float64) (relaxed, Cod
 		switch {
 		case math.IsNaN(f):
 			return x, LawUndefined
+		case x.rate.ByLogStrain > 0: // not to be seen at zero strain, where the exponent vanishes
+			return a.solveSoftening(first)
 		case size <= a.rounding(&x, logFraction), small && size <= tolerance:
 			return x, 0
 		}
