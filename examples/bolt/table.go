@@ -1,0 +1,172 @@
+package main
+
+import (
+	"fmt"
+	"io"
+	"math"
+	"strconv"
+	"strings"
+)
+
+// grouped writes a number with a blank between thousands.
+func grouped(x float64, decimals int) string {
+	s := strconv.FormatFloat(x, 'f', decimals, 64)
+	whole, rest, _ := strings.Cut(strings.TrimPrefix(s, "-"), ".")
+	for i := len(whole) - 3; i > 0; i -= 3 {
+		whole = whole[:i] + " " + whole[i:]
+	}
+	if rest != "" {
+		whole += "." + rest
+	}
+	if strings.HasPrefix(s, "-") && strings.Trim(s, "-0.") != "" {
+		return "-" + whole
+	}
+	return whole
+}
+
+// kilonewton writes the clamp load of the joint for a load of one bolt.
+func (p *report) kilonewton(perBolt float64) string {
+	return grouped(perBolt*float64(p.joint.count)/newtonPerKilonewton, 0)
+}
+
+// percent of the preload.
+func (p *report) percent(perBolt float64) float64 {
+	return 100 * perBolt / p.joint.perBolt(p.joint.preload)
+}
+
+func (p *report) write(w io.Writer) {
+	p.writeJoint(w)
+	p.writeTable(w)
+	p.writeSpells(w)
+	p.writeGains(w)
+	p.writeThermal(w)
+	p.writeEffort(w)
+}
+
+func (p *report) writeJoint(w io.Writer) {
+	j := p.joint
+	required := j.perBolt(j.required)
+	fmt.Fprintf(w, "%s\n\n", j.title)
+	fmt.Fprintf(w, "%d bolts, preload %s kN, required clamp load %s kN (%.1f %%)\n", j.count,
+		p.kilonewton(j.perBolt(j.preload)), p.kilonewton(required), p.percent(required))
+	p.writeStiffness(w, "at the assembly", p.course.samples[0].condition)
+	p.writeStiffness(w, "at its hottest", p.course.hot)
+}
+
+func (p *report) writeStiffness(w io.Writer, when string, c condition) {
+	k, _ := p.joint.flange.compliance(c.flange)
+	fmt.Fprintf(w, "%s: one bolt %s kN/mm, its share of the joint %s kN/mm, elastic follow-up Z = %.3f\n", when,
+		grouped(1/p.joint.boltCompliance(c.bolt)/newtonPerKilonewton, 0), grouped(1/k/newtonPerKilonewton, 0),
+		p.joint.followUp(c.bolt, c.flange))
+}
+
+func (p *report) writeTable(w io.Writer) {
+	const line = "%9s %7s %7s %9s %6s %11s %12s  %s\n"
+	thin := p.joint.thinnest()
+	fmt.Fprintf(w, "\nBolt stress and creep strain are those of the section %q.\n\n", p.joint.sections[thin].name)
+	fmt.Fprintf(w, line, "time", "bolt", "flange", "clamp", "of", "bolt", "creep", "")
+	fmt.Fprintf(w, line, "", "", "", "load", "init.", "stress", "strain", "")
+	fmt.Fprintf(w, line, "h", "°C", "°C", "kN", "%", "MPa", "%", "")
+	for _, s := range p.course.samples {
+		if !s.stop {
+			continue
+		}
+		text := fmt.Sprintf(line, grouped(s.time, 0), grouped(s.bolt-icePoint, 0), grouped(s.flange-icePoint, 0),
+			p.kilonewton(s.load), grouped(p.percent(s.load), 1), grouped(s.points[thin].stress, 1),
+			grouped(100*s.points[thin].state.Equivalent, 4), s.event)
+		fmt.Fprintln(w, strings.TrimRight(text, " \n"))
+	}
+	peak := p.peak(thin)
+	fmt.Fprintf(w, "\nHighest bolt stress %s MPa at %s h. The model has no plasticity: hold it against the yield strength.\n",
+		grouped(peak.points[thin].stress, 0), grouped(peak.time, 0))
+	if p.opened != nil {
+		fmt.Fprintf(w, "\n%v. The table ends there.\n", p.opened)
+	}
+}
+
+func (p *report) peak(section int) sample {
+	peak := p.course.samples[0]
+	for _, s := range p.course.samples {
+		if s.points[section].stress > peak.points[section].stress {
+			peak = s
+		}
+	}
+	return peak
+}
+
+func (p *report) writeSpells(w io.Writer) {
+	fmt.Fprintf(w, "\nClamp load under the required %s kN:\n", p.kilonewton(p.joint.perBolt(p.joint.required)))
+	if len(p.course.under) == 0 {
+		fmt.Fprintf(w, "  never\n")
+	}
+	for i, s := range p.course.under {
+		first := ""
+		if i == 0 {
+			first = "  the first time"
+		}
+		fmt.Fprintf(w, "  from %s h to %s h (%s h)%s\n", grouped(s.from, 0), grouped(s.to, 0), grouped(s.to-s.from, 0), first)
+	}
+}
+
+// writeGains compares runs with none, one, two … of the retightenings.
+func (p *report) writeGains(w io.Writer) {
+	if len(p.without) == 0 {
+		return
+	}
+	const line = "  %-20s %22s %9s %15s %13s %9s\n"
+	span := p.history.end() - p.history.start()
+	fmt.Fprintf(w, "\nWhat each retightening buys, in hours at or above the required load (of %s h):\n", grouped(span, 0))
+	fmt.Fprintf(w, line, "retightened", "clamp load raised, kN", "nut turn", "first under, h", "hours above", "gained, h")
+	before := 0.0
+	for k, c := range append(p.without[:len(p.without):len(p.without)], p.course) {
+		above := span - c.hoursUnder()
+		name, raised, turn, gained := "not at all", "", "", ""
+		if k > 0 && k <= len(c.retightened) {
+			done := c.retightened[k-1]
+			name = "and at " + grouped(done.time, 0) + " h"
+			if k == 1 {
+				name = "at " + grouped(done.time, 0) + " h"
+			}
+			raised, turn = p.kilonewton(done.before)+" to "+p.kilonewton(done.after), p.joint.turn(done.travel)
+			if done.needless {
+				raised, turn = p.kilonewton(done.before)+", not needed", ""
+			}
+			gained = grouped(above-before, 0)
+		}
+		first := "never"
+		if len(c.under) > 0 {
+			first = grouped(c.under[0].from, 0)
+		}
+		fmt.Fprintf(w, line, name, raised, turn, first, grouped(above, 0), gained)
+		before = above
+	}
+}
+
+func (p *report) writeThermal(w io.Writer) {
+	hot := p.course.hot
+	n := float64(p.joint.count) / newtonPerKilonewton
+	fmt.Fprintf(w, "\nAt %s h (bolt %.0f °C, flange %.0f °C) a bolt warmer by 1 K changes the clamp load by %+.1f kN, a flange "+
+		"warmer by 1 K by %+.1f kN.\n", grouped(hot.time, 0), hot.bolt-icePoint, hot.flange-icePoint, p.byBolt*n, p.byFlange*n)
+}
+
+func (p *report) writeEffort(w io.Writer) {
+	c, e := p.course, p.course.effort
+	fmt.Fprintf(w, "\nTime steps: %d, each also done in two halves; %d were repeated shorter. At a tenth of the tolerance the "+
+		"loads above change by at most %.2f kN (%.4f %% of the preload).\n", c.accepted, c.repeated,
+		p.uncertainty*float64(p.joint.count)/newtonPerKilonewton, p.percent(p.uncertainty))
+	fmt.Fprintf(w, "Global Newton with the library's tangent, %d unknowns: %d solves, %.2f iterations in the mean, %d at worst; "+
+		"largest scaled residual there: %s\n", 2*len(p.joint.sections)+2, e.solves,
+		float64(e.iterations)/math.Max(1, float64(e.solves)), len(e.worst)-1, residualList(e.worst))
+	if s := c.single; s.residuals != nil {
+		fmt.Fprintf(w, "All of %s h to %s h as one single step, to show the iteration: %s\n", grouped(s.from, 0), grouped(s.to, 0),
+			residualList(s.residuals))
+	}
+}
+
+func residualList(residuals []float64) string {
+	var words []string
+	for _, r := range residuals {
+		words = append(words, strconv.FormatFloat(r, 'e', 1, 64))
+	}
+	return strings.Join(words, ", ")
+}
