@@ -14,7 +14,7 @@ type powerDecay struct {
 //
 // and its limit exp(-D) for n = 1. With n < 1 the stress reaches zero in finite time and stays there.
 func (d powerDecay) logKept(t float64) float64 {
-	return logKept(d.law.Exponent, math.Log(d.modulus/d.start)+d.law.logRate(d.start)+math.Log(t))
+	return logKept(d.law.Exponent, logProduct(d.modulus/d.start, d.law.Rate, t)+d.law.logRatio(d.start))
 }
 
 func logKept(n, logD float64) float64 {
@@ -42,7 +42,7 @@ func (d powerDecay) timeTo(stress float64) float64 {
 		return math.NaN()
 	}
 	n, fall := d.law.Exponent, math.Log(d.start/stress)
-	logUnit := math.Log(d.start/d.modulus) - d.law.logRate(d.start) // ln of σ₀/(modulus·ṗ(σ₀))
+	logUnit := logProduct(d.start/d.modulus, 1/d.law.Rate) - d.law.logRatio(d.start) // ln of σ₀/(modulus·ṗ(σ₀))
 	switch y := (n - 1) * fall; {
 	case fall == 0:
 		return 0
@@ -53,6 +53,17 @@ func (d powerDecay) timeTo(stress float64) float64 {
 	default:
 		return math.Exp(logUnit) * (math.Expm1(y) / (n - 1))
 	}
+}
+
+// logProduct is the logarithm of a product of positive numbers that may itself leave the range of a float64. Powers of two
+// cancel exactly, where large logarithms of opposite sign would leave their rounding.
+func logProduct(factors ...float64) float64 {
+	fraction, exponent := 1.0, 0
+	for _, x := range factors {
+		f, e := math.Frexp(x)
+		fraction, exponent = fraction*f, exponent+e
+	}
+	return math.Log(fraction) + float64(exponent)*math.Ln2
 }
 
 // softplus is ln(1 + eˣ).

@@ -34,8 +34,14 @@
 // # Accuracy
 //
 // Results are formed through logarithms, so that a stress exponent of 50 in Pa and s neither overflows nor vanishes. Unless
-// a type says otherwise a stress is good to 1e-13 and a strain or a time to 1e-12, relative to itself, as long as the result
-// itself is within the range of a float64.
+// a type says otherwise they are good to 1e-12 relative to themselves, as long as they are within the range of a float64;
+// the worst of 640 answers held against 40-digit arithmetic is off by 4e-13 (a stress fallen by 124 decades), the others by
+// 1e-13 or less.
+//
+// # Speed
+//
+// The benchmarks of this package time the library's step against the least it could cost and against the same step done with
+// dense matrices, in one run. Dated results are in results, readable by benchstat.
 //
 // The problems are idealised. They say whether a code solves its equations, never whether a part is safe: that is decided
 // by the governing code of design and by qualified engineers.

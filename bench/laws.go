@@ -16,9 +16,10 @@ type Norton struct {
 // RateAt returns the creep rate [1/time] under a von Mises stress σ ≥ 0 [stress].
 func (l Norton) RateAt(stress float64) float64 { return math.Exp(l.logRate(stress)) }
 
-func (l Norton) logRate(stress float64) float64 {
-	return math.Log(l.Rate) + l.Exponent*math.Log(stress/l.Stress)
-}
+func (l Norton) logRate(stress float64) float64 { return math.Log(l.Rate) + l.logRatio(stress) }
+
+// logRatio is ln(ṗ/Rate).
+func (l Norton) logRatio(stress float64) float64 { return l.Exponent * math.Log(stress/l.Stress) }
 
 func (l Norton) check(c *checker) { l.checkAs(c, "Law") }
 
