@@ -9,7 +9,7 @@ const BoltzmannConstant = 1.380649e-23
 //
 //	μ(T) = Value + Slope (T - Reference)
 //
-// A slope of zero makes it a constant, whatever the reference. Where μ is not positive, the laws that use it are undefined.
+// Units are Pa and K unless the law says otherwise. A slope of zero makes it a constant, whatever the reference. Where μ is not positive, the laws that use it are undefined.
 type ShearModulus struct {
 	Value     float64 // μ at the reference temperature [Pa], > 0
 	Reference float64 // T₀ [K]; 300 K in Frost and Ashby
@@ -21,15 +21,15 @@ func (m ShearModulus) At(temperature float64) float64 {
 	return math.FMA(m.Slope, temperature-m.Reference, m.Value)
 }
 
-func (m ShearModulus) check(law string) error {
-	if err := positive(law, parameter{"shear modulus", m.Value}); err != nil {
+func (m ShearModulus) check(law, quantity string) error {
+	if err := positive(law, parameter{quantity, m.Value}); err != nil {
 		return err
 	}
 	if !finite(m.Slope) {
-		return &ParameterError{law, "slope of the shear modulus", m.Slope, "finite"}
+		return &ParameterError{law, "slope of the " + quantity, m.Slope, "finite"}
 	}
 	if !finite(m.Reference) || m.Slope != 0 && !(m.Reference > 0) {
-		return &ParameterError{law, "reference temperature of the shear modulus", m.Reference, "positive and finite"}
+		return &ParameterError{law, "reference temperature of the " + quantity, m.Reference, "positive and finite"}
 	}
 	return nil
 }

@@ -83,7 +83,7 @@ func (c *DislocationCreep) check() error {
 	if err != nil {
 		return err
 	}
-	if err := c.Modulus.check(mukherjeeName); err != nil {
+	if err := c.Modulus.check(mukherjeeName, "shear modulus"); err != nil {
 		return err
 	}
 	if err := c.Lattice.check(mukherjeeName, "lattice"); err != nil {
