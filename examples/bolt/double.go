@@ -71,16 +71,21 @@ func (c *condition) extrapolate(whole *condition) {
 	}
 }
 
-// accept takes a step: it notes where the load crosses the requirement on the way, and refuses a joint that has opened.
+// accept takes a step: it notes where the load crosses the requirement on the way, and ends where the joint opens.
 func (r *runner) accept(i int, c condition, next float64) error {
 	was, required := r.now, r.perBolt(r.required)
+	opens := !(c.load > 0)
+	if opens {
+		c = r.crossing(i, c, 0)
+	}
 	if (was.load < required) != (c.load < required) {
 		r.now = r.crossing(i, c, required)
 		r.watch(c.load < required)
 		r.record(crossingEvents[c.load < required], true)
 	}
 	r.before, r.now, r.next = was, c, next
-	if !(c.load > 0) {
+	if opens {
+		r.record("the joint opens", true)
 		return &jointOpen{c.time}
 	}
 	return nil
@@ -103,6 +108,8 @@ func (r *runner) watch(under bool) {
 
 // crossing finds when, within a step that ended in c, the load equals the one required, by bisection on the length.
 func (r *runner) crossing(i int, c condition, required float64) condition {
+	kept := r.effort // the bisection is no part of what a run costs
+	defer func() { r.effort = kept }()
 	low, high := 0.0, c.time-r.now.time
 	for range 40 { // 1e-12 of the step
 		middle := low + (high-low)/2

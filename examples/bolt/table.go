@@ -29,6 +29,15 @@ func (p *report) kilonewton(perBolt float64) string {
 	return grouped(perBolt*float64(p.joint.count)/newtonPerKilonewton, 0)
 }
 
+// hours writes a time, with decimals where the history is short.
+func (p *report) hours(time float64) string {
+	decimals := 0
+	if p.history.end()-p.history.start() < 1000 {
+		decimals = 2
+	}
+	return grouped(time, decimals)
+}
+
 // percent of the preload.
 func (p *report) percent(perBolt float64) float64 {
 	return 100 * perBolt / p.joint.perBolt(p.joint.preload)
@@ -39,7 +48,9 @@ func (p *report) write(w io.Writer) {
 	p.writeTable(w)
 	p.writeSpells(w)
 	p.writeGains(w)
-	p.writeThermal(w)
+	if p.opened == nil {
+		p.writeThermal(w)
+	}
 	p.writeEffort(w)
 }
 
@@ -50,7 +61,9 @@ func (p *report) writeJoint(w io.Writer) {
 	fmt.Fprintf(w, "%d bolts, preload %s kN, required clamp load %s kN (%.1f %%)\n", j.count,
 		p.kilonewton(j.perBolt(j.preload)), p.kilonewton(required), p.percent(required))
 	p.writeStiffness(w, "at the assembly", p.course.samples[0].condition)
-	p.writeStiffness(w, "at its hottest", p.course.hot)
+	if p.opened == nil {
+		p.writeStiffness(w, "at its hottest", p.course.hot)
+	}
 }
 
 func (p *report) writeStiffness(w io.Writer, when string, c condition) {
@@ -64,24 +77,28 @@ func (p *report) writeTable(w io.Writer) {
 	const line = "%9s %7s %7s %9s %6s %11s %12s  %s\n"
 	thin := p.joint.thinnest()
 	fmt.Fprintf(w, "\nBolt stress and creep strain are those of the section %q.\n\n", p.joint.sections[thin].name)
-	fmt.Fprintf(w, line, "time", "bolt", "flange", "clamp", "of", "bolt", "creep", "")
-	fmt.Fprintf(w, line, "", "", "", "load", "init.", "stress", "strain", "")
-	fmt.Fprintf(w, line, "h", "°C", "°C", "kN", "%", "MPa", "%", "")
+	writeLine(w, line, "time", "bolt", "flange", "clamp", "of", "bolt", "creep", "")
+	writeLine(w, line, "", "", "", "load", "init.", "stress", "strain", "")
+	writeLine(w, line, "h", "°C", "°C", "kN", "%", "MPa", "%", "")
 	for _, s := range p.course.samples {
 		if !s.stop {
 			continue
 		}
-		text := fmt.Sprintf(line, grouped(s.time, 0), grouped(s.bolt-icePoint, 0), grouped(s.flange-icePoint, 0),
+		writeLine(w, line, p.hours(s.time), grouped(s.bolt-icePoint, 0), grouped(s.flange-icePoint, 0),
 			p.kilonewton(s.load), grouped(p.percent(s.load), 1), grouped(s.points[thin].stress, 1),
 			grouped(100*s.points[thin].state.Equivalent, 4), s.event)
-		fmt.Fprintln(w, strings.TrimRight(text, " \n"))
 	}
 	peak := p.peak(thin)
 	fmt.Fprintf(w, "\nHighest bolt stress %s MPa at %s h. The model has no plasticity: hold it against the yield strength.\n",
-		grouped(peak.points[thin].stress, 0), grouped(peak.time, 0))
+		grouped(peak.points[thin].stress, 0), p.hours(peak.time))
 	if p.opened != nil {
 		fmt.Fprintf(w, "\n%v. The table ends there.\n", p.opened)
 	}
+}
+
+// writeLine leaves no blanks at the end of a line.
+func writeLine(w io.Writer, format string, cells ...any) {
+	fmt.Fprintln(w, strings.TrimRight(fmt.Sprintf(format, cells...), " \n"))
 }
 
 func (p *report) peak(section int) sample {
@@ -104,7 +121,7 @@ func (p *report) writeSpells(w io.Writer) {
 		if i == 0 {
 			first = "  the first time"
 		}
-		fmt.Fprintf(w, "  from %s h to %s h (%s h)%s\n", grouped(s.from, 0), grouped(s.to, 0), grouped(s.to-s.from, 0), first)
+		fmt.Fprintf(w, "  from %s h to %s h (%s h)%s\n", p.hours(s.from), p.hours(s.to), p.hours(s.to-s.from), first)
 	}
 }
 
@@ -115,29 +132,29 @@ func (p *report) writeGains(w io.Writer) {
 	}
 	const line = "  %-20s %22s %9s %15s %13s %9s\n"
 	span := p.history.end() - p.history.start()
-	fmt.Fprintf(w, "\nWhat each retightening buys, in hours at or above the required load (of %s h):\n", grouped(span, 0))
-	fmt.Fprintf(w, line, "retightened", "clamp load raised, kN", "nut turn", "first under, h", "hours above", "gained, h")
+	fmt.Fprintf(w, "\nWhat each retightening buys, in hours at or above the required load (of %s h):\n", p.hours(span))
+	writeLine(w, line, "retightened", "clamp load raised, kN", "nut turn", "first under, h", "hours above", "gained, h")
 	before := 0.0
 	for k, c := range append(p.without[:len(p.without):len(p.without)], p.course) {
 		above := span - c.hoursUnder()
 		name, raised, turn, gained := "not at all", "", "", ""
 		if k > 0 && k <= len(c.retightened) {
 			done := c.retightened[k-1]
-			name = "and at " + grouped(done.time, 0) + " h"
+			name = "and at " + p.hours(done.time) + " h"
 			if k == 1 {
-				name = "at " + grouped(done.time, 0) + " h"
+				name = "at " + p.hours(done.time) + " h"
 			}
 			raised, turn = p.kilonewton(done.before)+" to "+p.kilonewton(done.after), p.joint.turn(done.travel)
 			if done.needless {
 				raised, turn = p.kilonewton(done.before)+", not needed", ""
 			}
-			gained = grouped(above-before, 0)
+			gained = p.hours(above - before)
 		}
 		first := "never"
 		if len(c.under) > 0 {
-			first = grouped(c.under[0].from, 0)
+			first = p.hours(c.under[0].from)
 		}
-		fmt.Fprintf(w, line, name, raised, turn, first, grouped(above, 0), gained)
+		writeLine(w, line, name, raised, turn, first, p.hours(above), gained)
 		before = above
 	}
 }
@@ -146,7 +163,7 @@ func (p *report) writeThermal(w io.Writer) {
 	hot := p.course.hot
 	n := float64(p.joint.count) / newtonPerKilonewton
 	fmt.Fprintf(w, "\nAt %s h (bolt %.0f °C, flange %.0f °C) a bolt warmer by 1 K changes the clamp load by %+.1f kN, a flange "+
-		"warmer by 1 K by %+.1f kN.\n", grouped(hot.time, 0), hot.bolt-icePoint, hot.flange-icePoint, p.byBolt*n, p.byFlange*n)
+		"warmer by 1 K by %+.1f kN.\n", p.hours(hot.time), hot.bolt-icePoint, hot.flange-icePoint, p.byBolt*n, p.byFlange*n)
 }
 
 func (p *report) writeEffort(w io.Writer) {
@@ -158,7 +175,7 @@ func (p *report) writeEffort(w io.Writer) {
 		"largest scaled residual there: %s\n", 2*len(p.joint.sections)+2, e.solves,
 		float64(e.iterations)/math.Max(1, float64(e.solves)), len(e.worst)-1, residualList(e.worst))
 	if s := c.single; s.residuals != nil {
-		fmt.Fprintf(w, "All of %s h to %s h as one single step, to show the iteration: %s\n", grouped(s.from, 0), grouped(s.to, 0),
+		fmt.Fprintf(w, "All of %s h to %s h as one single step, to show the iteration: %s\n", p.hours(s.from), p.hours(s.to),
 			residualList(s.residuals))
 	}
 }
