@@ -32,31 +32,32 @@ func (f ValueFunc) Rate(p Point) Rate {
 	if f == nil {
 		return undefined()
 	}
-	return Rate{
-		Value:         f(p),
-		ByStress:      fourthOrder(f, p, p.Stress, func(p *Point, x float64) { p.Stress = x }),
-		ByStrain:      fourthOrder(f, p, p.Strain, func(p *Point, x float64) { p.Strain = x }),
-		ByTemperature: fourthOrder(f, p, p.Temperature, func(p *Point, x float64) { p.Temperature = x }),
+	value := f(p)
+	var by [3]float64
+	for i := range by {
+		by[i] = f.difference(p, i, value)
 	}
+	return Rate{value, by[0], by[1], by[2]}
 }
 
 // differenceStep balances the truncation (n·h)⁴/30 of a power law against rounding ε/(n·h); a power of two keeps it exact.
 const differenceStep = 1.0 / (1 << 13)
 
-func fourthOrder(f ValueFunc, p Point, x float64, set func(*Point, float64)) float64 {
+// difference is the fourth-order central difference by the argument of the given number: stress, strain, temperature.
+func (f ValueFunc) difference(p Point, argument int, value float64) float64 {
+	arguments := [3]float64{p.Stress, p.Strain, p.Temperature}
+	x := arguments[argument]
 	h := x * differenceStep
 	if h == 0 {
 		return 0
 	}
-	at := func(x float64) float64 {
-		moved := p
-		set(&moved, x)
-		return f(moved)
+	var at [4]float64
+	for i, step := range [4]float64{-2, -1, 1, 2} {
+		arguments[argument] = x + step*h
+		at[i] = f(Point{arguments[0], arguments[1], arguments[2]})
 	}
-	near := at(x+h) - at(x-h)
-	far := at(x+2*h) - at(x-2*h)
-	d := (8*near - far) / (12 * h)
-	if math.IsNaN(d) && math.IsInf(f(p), 1) {
+	d := (8*(at[2]-at[1]) - (at[3] - at[0])) / (12 * h)
+	if math.IsNaN(d) && math.IsInf(value, 1) {
 		return math.Inf(1)
 	}
 	return d

@@ -24,7 +24,7 @@ func newPower(rate, stress, strain, n, k float64) power {
 func newPrefactor(a, n float64) power {
 	fraction, exponent := math.Frexp(a)
 	e := float64(exponent)
-	const far = 1000 // keeps 2^±shift representable
+	const far = 500 // keeps σ/2^±shift representable, with all its digits, for stresses from 1e-150 to 1e150
 	shift := math.Max(-far, math.Min(far, math.Round(-(e+math.Log2(fraction))/n)))
 	w := newPower(1, math.Ldexp(1, int(shift)), 1, n, 0)
 	w.logRate = math.Log(fraction) + math.FMA(shift, n, e)*math.Ln2

@@ -90,25 +90,32 @@ func (t Thermal) LogRate(p Point) LogRate {
 	return l
 }
 
-// Rate multiplies the law within by f and adds the derivative of f.
+// Rate multiplies the law within by f and adds the derivative of f. It goes by way of the logarithm, which holds where the
+// factor or the law within alone would leave the range of a float64, except at zero stress and zero strain.
 func (t Thermal) Rate(p Point) Rate {
-	logFactor, byLog := t.factor.LogFactor(p.Temperature)
-	r := t.law.Rate(p)
-	if finite(r.Value) && r.Value > 0 && p.Strain > 0 { // the logarithm holds where the plain product would overflow
+	if p.Stress > 0 && p.Strain > 0 {
 		return rateOf(p, t.LogRate(p))
 	}
-	f := math.Exp(logFactor)
-	byTemperature := 0.0
-	if r.Value != 0 {
-		byTemperature = r.Value * f * byLog / p.Temperature
+	r := t.law.Rate(p)
+	if p.Stress > 0 && r.ByStrain == 0 { // zero strain, which the law within does not heed
+		return rateOf(p, t.LogRate(p))
 	}
-	return Rate{r.Value * f, scale(r.ByStress, f), scale(r.ByStrain, f), scale(r.ByTemperature, f) + byTemperature}
+	logFactor, byLog := t.factor.LogFactor(p.Temperature)
+	if math.IsNaN(logFactor) {
+		return undefined()
+	}
+	f := math.Exp(logFactor)
+	scaled := Rate{scale(r.Value, f), scale(r.ByStress, f), scale(r.ByStrain, f), scale(r.ByTemperature, f)}
+	if scaled.Value != 0 && byLog != 0 {
+		scaled.ByTemperature += scaled.Value * byLog / p.Temperature
+	}
+	return scaled
 }
 
-// scale multiplies, taking an exact zero as a limit that no factor changes.
+// scale multiplies by a positive factor, which may have over- or underflowed: zero and infinity are limits it cannot change.
 func scale(x, f float64) float64 {
-	if x == 0 {
-		return 0
+	if x == 0 || math.IsInf(x, 0) {
+		return x
 	}
 	return x * f
 }

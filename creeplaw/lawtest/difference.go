@@ -7,8 +7,8 @@ const (
 	smallest = 0x1p-1074 // spacing of the numbers near zero
 	nodes    = 7
 	coarsest = 2 // exponents of the largest and the smallest step, 2⁻²
-	finest   = 20
-	fine     = 14 // from this step on the truncation is negligible, for exponents up to a thousand
+	finest   = 22
+	fine     = 16 // from this step on the truncation is negligible, for exponents up to some thousand
 )
 
 // slope is a derivative by the logarithm of an argument with a bound on its error.

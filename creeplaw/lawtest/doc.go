@@ -24,7 +24,7 @@
 //	log exponent of strain
 //	log exponent of temperature
 //	logarithm at zero           LogRate leads to the rates at zero stress and zero strain
-//	explains what is undefined  CheckPoint returns an error where the rate is NaN, and nil elsewhere
+//	explains what is undefined  CheckPoint returns an error where the rate is NaN, and nil at every other possible point
 //
 // The rules for a capability run whenever the law has it. A capability that is claimed and missing is a failure, never a
 // skip, and so is a rule that could examine fewer points than it should have.
@@ -32,7 +32,7 @@
 // # What differences can resolve
 //
 // Each derivative is taken by the logarithm of its argument from seven points that stay inside the box (central where they
-// fit, one-sided at its faces), exact for polynomials of the sixth degree, with steps from 1/4 down to 2⁻²⁰ of the argument.
+// fit, one-sided at its faces), exact for polynomials of the sixth degree, with steps from 1/4 down to 2⁻²² of the argument.
 // Between one step and the next the truncation error falls 64-fold and the rounding error doubles. So the distance to the
 // neighbours' results, on either side, bounds the error of each: truncation shows against the coarser step, rounding against
 // the finer. Neighbours may agree by chance; so the bound also has the scatter of a value, as the largest step-to-step change

@@ -143,7 +143,7 @@ func (b Box) complete() (Box, error) {
 		return b, fmt.Errorf("DerivativeTolerance is %v, must be above 0 and at most 0.01", b.DerivativeTolerance)
 	}
 	if b.Points < 50 {
-		return b, fmt.Errorf("Points is %d, must be 50 or more", b.Points)
+		return b, fmt.Errorf("number of Points is %d, must be 50 or more", b.Points)
 	}
 	return b, b.Claims.check()
 }
@@ -155,7 +155,7 @@ func (c Capability) check() error {
 		names = append(names, strings.TrimPrefix(k.name, "creeplaw."))
 	}
 	if c == 0 || c&^known != 0 || c&RateOnly != 0 && c != RateOnly {
-		return fmt.Errorf("Claims is %b, must be RateOnly or a union of the others: %s", c, strings.Join(names, ", "))
+		return fmt.Errorf("set of Claims is %b, must be RateOnly or a union of the others: %s", c, strings.Join(names, ", "))
 	}
 	return nil
 }

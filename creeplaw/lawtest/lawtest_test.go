@@ -145,6 +145,11 @@ func TestGoodLawsPass(t *testing.T) {
 	}
 }
 
+// Under the race detector this shows that the kit shares nothing between its own goroutines.
+func TestGoroutinesOfTheKit(t *testing.T) {
+	Run(t, logLaw{modelRate, modelLog}, modelBox(Logarithmic))
+}
+
 // exponential creeps under no stress.
 func exponential(p creeplaw.Point) creeplaw.Rate {
 	v := 1e-9 * math.Exp(0.05*p.Stress)
@@ -207,10 +212,10 @@ func TestUnusableBoxIsAFailure(t *testing.T) {
 		{"LogStress is from -1 to 3, must", func(b *Box) { b.LogStress = Range{-1, 3} }},
 		{"DerivativeTolerance is NaN, must be above 0 and at most 0.01", func(b *Box) { b.DerivativeTolerance = math.NaN() }},
 		{"DerivativeTolerance is 0.1, must", func(b *Box) { b.DerivativeTolerance = 0.1 }},
-		{"Points is 49, must be 50 or more", func(b *Box) { b.Points = 49 }},
-		{"Claims is 0, must be RateOnly or a union of the others: RateOnly, Logarithmic, Explainer", func(b *Box) { b.Claims = 0 }},
-		{"Claims is 11, must", func(b *Box) { b.Claims = RateOnly | Logarithmic }},
-		{"Claims is 1000000, must", func(b *Box) { b.Claims = 64 }},
+		{"number of Points is 49, must be 50 or more", func(b *Box) { b.Points = 49 }},
+		{"set of Claims is 0, must be RateOnly or a union of the others: RateOnly, Logarithmic, Explainer", func(b *Box) { b.Claims = 0 }},
+		{"set of Claims is 11, must", func(b *Box) { b.Claims = RateOnly | Logarithmic }},
+		{"set of Claims is 1000000, must", func(b *Box) { b.Claims = 64 }},
 	}
 	for _, c := range cases {
 		box := modelBox(RateOnly)
