@@ -14,44 +14,75 @@ import (
 	"example.com/holdtime/integrate"
 )
 
-// The speed benchmarks time a step against a yardstick of the same run: a batch of the yardstick, a batch of the case, and so
-// on in turn. The ratio is the median over the pairs, so that what else the machine does cancels. ns/op is the median per
-// step, also of the case alone.
+// The speed benchmarks time a step against a yardstick of the same run: a batch of the yardstick, a batch of the case on the
+// same points, and so on in turn through the mix, each batch shorter than a slice of the scheduler. A batch costs the median
+// of its visits, the mix the sum of its batches. What else the machine does falls on both alike or out of the median.
+// ns/op is per step, of the case alone.
 //
 //	go test ./bench -run '^$' -bench . -count 6 > bench/results/DATE.txt
 //
 // writes a file that benchstat reads; TestMain adds toolchain and settings to it.
 
-// race takes turns and reports.
-func race(b *testing.B, unit string, points []mixPoint, yardstick, contestant func(*mixPoint)) {
-	batch := func(f func(*mixPoint)) float64 {
-		start := time.Now()
-		for i := range points {
-			f(&points[i])
-		}
-		return float64(time.Since(start).Nanoseconds()) / float64(len(points))
+const mostVisits = 1 << 12 // of a batch; beyond, the oldest is replaced
+
+// lane keeps what the visits of each batch cost.
+type lane struct{ visits [][]float64 }
+
+func newLane(batches int) *lane {
+	l := &lane{make([][]float64, batches)}
+	for i := range l.visits {
+		l.visits[i] = make([]float64, 0, mostVisits)
 	}
-	batch(yardstick) // warm
-	batch(contestant)
-	const most = 1 << 14 // beyond, the oldest pair is replaced
-	ratios, costs, floors := make([]float64, 0, most), make([]float64, 0, most), make([]float64, 0, most)
+	return l
+}
+
+func (l *lane) time(batch, turn int, points []mixPoint, f func(*mixPoint)) {
+	start := time.Now()
+	for i := range points {
+		f(&points[i])
+	}
+	cost := float64(time.Since(start).Nanoseconds())
+	if v := l.visits[batch]; len(v) < mostVisits {
+		l.visits[batch] = append(v, cost)
+	} else {
+		v[turn%mostVisits] = cost
+	}
+}
+
+// total is the cost of the mix.
+func (l *lane) total() (sum float64) {
+	for _, v := range l.visits {
+		slices.Sort(v)
+		sum += v[len(v)/2]
+	}
+	return sum
+}
+
+// race takes turns and reports.
+func race(b *testing.B, unit string, points []mixPoint, batch int, yardstick, contestant func(*mixPoint)) {
+	batches := len(points) / batch
+	low, high := newLane(batches), newLane(batches)
 	turn := 0
 	for b.Loop() {
-		floor := batch(yardstick)
-		cost := batch(contestant)
-		if len(ratios) < most {
-			ratios, costs, floors = append(ratios, 0), append(costs, 0), append(floors, 0)
+		for i := range batches {
+			part := points[i*batch : (i+1)*batch]
+			low.time(i, turn, part, yardstick)
+			high.time(i, turn, part, contestant)
 		}
-		ratios[turn%most], costs[turn%most], floors[turn%most] = cost/floor, cost, floor
 		turn++
 	}
+	n := float64(len(points))
 	b.ReportAllocs()
-	b.ReportMetric(median(ratios), unit)
-	b.ReportMetric(median(costs), "ns/op")
-	b.ReportMetric(median(floors), "yardstick-ns")
-	count, bytes := allocations(func() { batch(contestant) })
-	b.ReportMetric(count/float64(len(points)), "allocs/op")
-	b.ReportMetric(bytes/float64(len(points)), "B/op")
+	b.ReportMetric(high.total()/low.total(), unit)
+	b.ReportMetric(high.total()/n, "ns/op")
+	b.ReportMetric(low.total()/n, "yardstick-ns")
+	count, bytes := allocations(func() {
+		for i := range points {
+			contestant(&points[i])
+		}
+	})
+	b.ReportMetric(count/n, "allocs/op")
+	b.ReportMetric(bytes/n, "B/op")
 }
 
 // allocations counts what one call of f allocates, and its bytes.
@@ -63,11 +94,6 @@ func allocations(f func()) (count, bytes float64) {
 	return float64(after.Mallocs - before.Mallocs), float64(after.TotalAlloc - before.TotalAlloc)
 }
 
-func median(x []float64) float64 {
-	sorted := slices.Sorted(slices.Values(x))
-	return sorted[len(sorted)/2]
-}
-
 // BenchmarkStep is the full step with tangent against the floor: xfloor says how many floors it costs.
 func BenchmarkStep(b *testing.B) {
 	for _, c := range speedCases(b) {
@@ -75,7 +101,7 @@ func BenchmarkStep(b *testing.B) {
 			f := newFloor()
 			var low, out integrate.Result
 			iterations, steps := 0, 0
-			race(b, "xfloor", c.points, func(p *mixPoint) { f.step(&low, &p.start, &p.increment) }, func(p *mixPoint) {
+			race(b, "xfloor", c.points, 256, func(p *mixPoint) { f.step(&low, &p.start, &p.increment) }, func(p *mixPoint) {
 				if err := c.material.Step(&out, &p.start, p.increment); err != nil {
 					b.Fatal(err)
 				}
@@ -95,7 +121,7 @@ func BenchmarkDenseNewton(b *testing.B) {
 		b.Run(name, func(b *testing.B) {
 			dense := newDenseNewton(mixYoung, mixNu, 1e-15, 5, lus[name])
 			var low, out integrate.Result
-			race(b, "xstep", c.points, func(p *mixPoint) {
+			race(b, "xstep", c.points, 32, func(p *mixPoint) {
 				if err := c.material.Step(&low, &p.start, p.increment); err != nil {
 					b.Fatal(err)
 				}
