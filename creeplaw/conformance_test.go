@@ -123,6 +123,7 @@ func TestSumConforms(t *testing.T) {
 		"one":                   made(creeplaw.NewSum(steady)),
 		"primary and secondary": made(creeplaw.NewSum(primary, steady)),
 		"two mechanisms":        made(creeplaw.NewSum(viscous, warm)),
+		"in the other order":    made(creeplaw.NewSum(warm, primary, viscous)), // the larger one may come last
 		"of sums":               made(creeplaw.NewSum(made(creeplaw.NewSum(primary, viscous)), warm)),
 	} {
 		conform(t, name, law, representable(12.5))
