@@ -1,6 +1,7 @@
 package published_test
 
 import (
+	"flag"
 	"fmt"
 	"math"
 	"strings"
@@ -13,6 +14,8 @@ import (
 	"example.com/holdtime/creeplaw/lawtest"
 	"example.com/holdtime/creeplaw/published"
 )
+
+var campaign = flag.Bool("campaign", false, "examine the sets at 20000 points each instead of 200")
 
 func TestEverySetSaysWhatItIs(t *testing.T) {
 	names := map[string]bool{}
@@ -44,6 +47,11 @@ func TestOnlyWhatWasReadIsVerified(t *testing.T) {
 }
 
 func TestEverySetConforms(t *testing.T) {
+	points := 200
+	if *campaign {
+		points = 20000
+	}
+	worst, checks := 0.0, 0
 	for _, s := range published.Sets() {
 		stress := s.Range.Stress.High
 		if stress == 0 {
@@ -63,12 +71,15 @@ func TestEverySetConforms(t *testing.T) {
 			claims |= lawtest.Explainer
 		}
 		t.Run(s.Name, func(t *testing.T) {
-			lawtest.Run(t, s.Law, lawtest.Box{
+			for _, r := range lawtest.Run(t, s.Law, lawtest.Box{
 				Claims: claims, Stress: lawtest.Range{1e-2 * stress, 3 * stress}, Strain: lawtest.Range{1e-8, 0.5},
-				Temperature: temperature, LogStress: lawtest.Range{1e-12 * stress, 1e4 * stress}, Points: 200,
-			})
+				Temperature: temperature, LogStress: lawtest.Range{1e-12 * stress, 1e4 * stress}, Points: points,
+			}) {
+				worst, checks = math.Max(worst, r.Worst), checks+r.Checks
+			}
 		})
 	}
+	t.Logf("%d checks, the worst at %.2f of what is allowed", checks, worst)
 }
 
 func TestSetInOtherUnits(t *testing.T) {
