@@ -36,7 +36,7 @@ func TestComparisonsFailWhenTheyShould(t *testing.T) {
 		{"one ulp", func(t TB) bool { return ULP(t, "", math.Nextafter(1, 2), 1, 1) }, true},
 		{"two ulp", func(t TB) bool { return ULP(t, "", 1, 1-math.Ldexp(1, -52), 1) }, false},
 		{"across zero", func(t TB) bool { return ULP(t, "", 5e-324, -5e-324, 2) }, true},
-		{"NaN ulp", func(t TB) bool { return ULP(t, "", nan, 1, 1 << 60) }, false},
+		{"NaN ulp", func(t TB) bool { return ULP(t, "", nan, 1, 1<<60) }, false},
 	}
 	for _, c := range cases {
 		r := &recorder{}
