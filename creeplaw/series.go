@@ -21,10 +21,14 @@ var (
 	_ Explainer   = Series{}
 )
 
-// NewSeries builds a sequence from one law or more; none, or a nil one, is a *MissingError.
+// NewSeries builds a sequence from one law or more; none, or a nil one, is a *MissingError, one with internal variables
+// a *CompositionError.
 func NewSeries(laws ...Law) (Series, error) {
 	if len(laws) == 0 {
 		return Series{}, &MissingError{"series of laws", "law"}
+	}
+	if err := withoutVariables("series of laws", laws...); err != nil {
+		return Series{}, err
 	}
 	s := Series{make([]Logarithmic, len(laws))}
 	for i, law := range laws {

@@ -13,10 +13,14 @@ type Sum struct{ laws []Logarithmic }
 
 var _ Logarithmic = Sum{}
 
-// NewSum builds a sum from one law or more; none, or a nil one, is a *MissingError.
+// NewSum builds a sum from one law or more; none, or a nil one, is a *MissingError, one with internal variables a
+// *CompositionError.
 func NewSum(laws ...Law) (Sum, error) {
 	if len(laws) == 0 {
 		return Sum{}, &MissingError{"sum of laws", "law"}
+	}
+	if err := withoutVariables("sum of laws", laws...); err != nil {
+		return Sum{}, err
 	}
 	s := Sum{make([]Logarithmic, len(laws))}
 	for i, law := range laws {

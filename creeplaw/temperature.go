@@ -70,13 +70,17 @@ type Thermal struct {
 
 var _ Logarithmic = Thermal{}
 
-// WithTemperature multiplies the rate of a law by a temperature factor. A nil law or factor is a *MissingError.
+// WithTemperature multiplies the rate of a law by a temperature factor. A nil law or factor is a *MissingError. A law
+// with internal variables takes its factors as parameters; here it is a *CompositionError.
 func WithTemperature(law Law, factor TemperatureFactor) (Thermal, error) {
 	if law == nil {
 		return Thermal{}, &MissingError{"temperature-dependent law", "law"}
 	}
 	if factor == nil {
 		return Thermal{}, &MissingError{"temperature-dependent law", "temperature factor"}
+	}
+	if err := withoutVariables("temperature-dependent law", law); err != nil {
+		return Thermal{}, err
 	}
 	return Thermal{Log(law), factor}, nil
 }

@@ -138,11 +138,15 @@ var (
 )
 
 // NewTabulated builds the law from at least two temperatures [K], positive and strictly ascending, and a law for each. The
-// slices are copied. A temperature out of order is a *ParameterError, a nil law a *MissingError.
+// slices are copied. A temperature out of order is a *ParameterError, a nil law a *MissingError, one with internal
+// variables a *CompositionError.
 func NewTabulated(temperatures []float64, laws []Law, options TableOptions) (Tabulated, error) {
 	const name = "tabulated law"
 	table, err := newTemperatureTable(name, temperatures, len(laws), options)
 	if err != nil {
+		return Tabulated{}, err
+	}
+	if err := withoutVariables(name, laws...); err != nil {
 		return Tabulated{}, err
 	}
 	t := Tabulated{table, make([]Logarithmic, len(laws))}

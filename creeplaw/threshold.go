@@ -28,12 +28,16 @@ var (
 	_ Explainer   = Threshold{}
 )
 
-// WithThreshold puts a threshold stress σₜ [stress], positive and finite, before a law. A nil law is a *MissingError.
+// WithThreshold puts a threshold stress σₜ [stress], positive and finite, before a law. A nil law is a
+// *MissingError, one with internal variables a *CompositionError.
 func WithThreshold(law Law, thresholdStress float64) (Threshold, error) {
 	if law == nil {
 		return Threshold{}, &MissingError{"threshold stress", "law"}
 	}
 	if err := positive("threshold stress", parameter{"threshold stress", thresholdStress}); err != nil {
+		return Threshold{}, err
+	}
+	if err := withoutVariables("threshold stress", law); err != nil {
 		return Threshold{}, err
 	}
 	return Threshold{Log(law), thresholdStress}, nil

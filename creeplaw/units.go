@@ -96,7 +96,7 @@ var (
 )
 
 // InUnits takes a law written in its own units and returns it in the units wanted. A unit that is not positive and finite is
-// a *ParameterError, a nil law a *MissingError.
+// a *ParameterError, a nil law a *MissingError, one with internal variables a *CompositionError.
 func InUnits(law Law, own, wanted Units) (Converted, error) {
 	const name = "law in other units"
 	if law == nil {
@@ -105,6 +105,9 @@ func InUnits(law Law, own, wanted Units) (Converted, error) {
 	err := positive(name, parameter{"unit of stress", float64(own.Stress)}, parameter{"unit of time", float64(own.Time)},
 		parameter{"unit of stress wanted", float64(wanted.Stress)}, parameter{"unit of time wanted", float64(wanted.Time)})
 	if err != nil {
+		return Converted{}, err
+	}
+	if err := withoutVariables(name, law); err != nil {
 		return Converted{}, err
 	}
 	c := Converted{law: Log(law), stress: float64(wanted.Stress / own.Stress), time: float64(wanted.Time / own.Time)}

@@ -16,6 +16,7 @@ type Material struct {
 	expands    bool
 	law        creeplaw.Logarithmic
 	given      creeplaw.Law
+	memory     memory // internal variables of the law
 }
 
 // Options are what a material may have besides elasticity and a law. The zero Options are the documented defaults.
@@ -23,8 +24,8 @@ type Options struct {
 	Expansion Expansion // free thermal strain; none by default
 }
 
-// New builds a material. A nil law, an impossible elastic constant or an impossible expansion is an error that names the
-// quantity and its value (*MaterialError); no material is made.
+// New builds a material. A nil law, an impossible elastic constant or expansion, or a law with impossible internal variables
+// is an error that names the quantity and its value (*MaterialError); no material is made.
 func New(elastic Isotropic, law creeplaw.Law, options Options) (*Material, error) {
 	if law == nil {
 		return nil, &MaterialError{"creep law", math.NaN(), 0, "given"}
@@ -42,6 +43,10 @@ func New(elastic Isotropic, law creeplaw.Law, options Options) (*Material, error
 		law:       creeplaw.Log(law),
 		given:     law,
 	}
+	var err error
+	if m.memory, err = newMemory(law); err != nil {
+		return nil, err
+	}
 	if elastic.constant() {
 		m.isConstant, m.constant = true, elastic.at(1)
 		if !(finite(m.constant.bulk) && m.constant.bulk > 0 && m.constant.shear > 0) {
@@ -53,6 +58,14 @@ func New(elastic Isotropic, law creeplaw.Law, options Options) (*Material, error
 
 // Law returns the creep law the material was built with.
 func (m *Material) Law() creeplaw.Law { return m.given }
+
+// Variables returns the internal variables of the law, in the order of State.Internal; none for most laws.
+func (m *Material) Variables() []creeplaw.Variable {
+	if m.memory.law == nil {
+		return nil
+	}
+	return append([]creeplaw.Variable(nil), m.memory.law.Variables()...)
+}
 
 // moduliAt returns the elastic constants at a temperature; NaN outside a table.
 func (m *Material) moduliAt(temperature float64) moduli {

@@ -3,6 +3,7 @@ package integrate
 import (
 	"fmt"
 
+	"example.com/holdtime/creeplaw"
 	"example.com/holdtime/tensor"
 )
 
@@ -12,20 +13,27 @@ import (
 type State struct {
 	Creep      tensor.Sym // creep strain εc [-], tensor shear components
 	Equivalent float64    // p: accumulated equivalent creep strain ∫√(⅔ ε̇c:ε̇c) dt [-], >= 0
+
+	// Internal are the internal variables of the law, in the order of Material.Variables, each as its deviation from the
+	// initial value: 0 is virgin. What a law does not use is left as it is.
+	Internal [creeplaw.MaxVariables]float64
 }
 
-// stateLength is the number of floats a state packs to.
-const stateLength = 7
+// strainLength is the number of floats a state packs to, without internal variables.
+const strainLength = 7
 
-// StateLength is the number of values that PackState writes for one point of this material.
-func (m *Material) StateLength() int { return stateLength }
+// StateLength is the number of values that PackState writes for one point of this material: seven, and one for each internal
+// variable of its law.
+func (m *Material) StateLength() int { return strainLength + m.memory.count }
 
-// PackState writes a state as StateLength values: the creep strain xx, yy, zz, yz, xz, xy, then the equivalent creep strain.
-// A dst of another length is a caller's bug and panics. The round trip is exact.
+// PackState writes a state as StateLength values: the creep strain xx, yy, zz, yz, xz, xy, the equivalent creep strain, then
+// the deviations of the law's internal variables. A dst of another length is a caller's bug and panics. The round trip is
+// exact.
 func (m *Material) PackState(dst []float64, s *State) {
 	checkLength("dst", len(dst), m.StateLength())
 	copy(dst, s.Creep[:])
 	dst[6] = s.Equivalent
+	copy(dst[strainLength:], s.Internal[:m.memory.count])
 }
 
 // UnpackState reads what PackState wrote. A src of another length is a caller's bug and panics. The values are not judged
@@ -34,6 +42,8 @@ func (m *Material) UnpackState(s *State, src []float64) {
 	checkLength("src", len(src), m.StateLength())
 	copy(s.Creep[:], src)
 	s.Equivalent = src[6]
+	s.Internal = [creeplaw.MaxVariables]float64{}
+	copy(s.Internal[:], src[strainLength:])
 }
 
 func checkLength(name string, got, want int) {

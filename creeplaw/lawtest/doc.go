@@ -25,6 +25,14 @@
 //	log exponent of temperature
 //	logarithm at zero           LogRate leads to the rates at zero stress and zero strain
 //	explains what is undefined  CheckPoint returns an error where the rate is NaN, and nil at every other possible point
+//	sound variables             of an Evolving law: named, finite at first, with a limit; the box has ranges for them
+//	evolution at the start      Rate is what Evolve says of virgin material in tension
+//	evolution finite            Evolve gives finite numbers in the box, and nothing for variables the law has not
+//	derivatives of the evolution  all partial derivatives agree with differences of Evolve
+//	evolution of NaN is NaN
+//	blind to the principal stress  a law that says it does not see it gives the same without
+//	evolution has the same bits
+//	evolution without allocation
 //
 // The rules for a capability run whenever the law has it. A capability that is claimed and missing is a failure, never a
 // skip, and so is a rule that could examine fewer points than it should have.

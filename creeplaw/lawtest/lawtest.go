@@ -29,6 +29,10 @@ type Box struct {
 	// decades at either end, where most plain rates have left the range of a float64.
 	LogStress Range
 
+	// Internal are the ranges of the internal variables of an Evolving law, in its order; they may include 0 and negative
+	// values.
+	Internal []Range
+
 	// CreepsAtZeroStress declares that the law creeps under no stress, as an exponential of stress does. Zero stress must
 	// then give a finite rate, and above zero somewhere, or the declaration itself is a failure.
 	CreepsAtZeroStress bool
@@ -48,6 +52,7 @@ const (
 	RateOnly    Capability = 1 << iota // none: the law is just a creeplaw.Law
 	Logarithmic                        // creeplaw.Logarithmic
 	Explainer                          // creeplaw.Explainer
+	Evolving                           // creeplaw.Evolving
 )
 
 // capabilities is the list to extend when package creeplaw gains one; the rules that exercise it go to the list of rules.
@@ -58,6 +63,7 @@ var capabilities = []struct {
 }{
 	{Logarithmic, "creeplaw.Logarithmic", func(l creeplaw.Law) bool { _, ok := l.(creeplaw.Logarithmic); return ok }},
 	{Explainer, "creeplaw.Explainer", func(l creeplaw.Law) bool { _, ok := l.(creeplaw.Explainer); return ok }},
+	{Evolving, "creeplaw.Evolving", func(l creeplaw.Law) bool { _, ok := l.(creeplaw.Evolving); return ok }},
 }
 
 // Result tells how one rule fared.
@@ -87,6 +93,9 @@ func Run(t TB, law creeplaw.Law, box Box) []Result {
 	if x.logarithmic != nil {
 		x.logPoints = box.sample(box.LogStress)
 	}
+	if x.evolving, _ = law.(creeplaw.Evolving); x.evolving != nil {
+		x.evolvingPoints = box.sampleEvolving(x.points)
+	}
 	held := x.capabilities()
 	var results []Result
 	for _, r := range rules {
@@ -109,6 +118,9 @@ type examination struct {
 	box         Box
 	points      []creeplaw.Point // in the box
 	logPoints   []creeplaw.Point // in the box, over LogStress
+
+	evolving       creeplaw.Evolving // nil if the law is not
+	evolvingPoints []creeplaw.EvolvingPoint
 }
 
 func (x *examination) capabilities() (held Capability) {
@@ -137,6 +149,11 @@ func (b Box) complete() (Box, error) {
 	}{{"Stress", b.Stress}, {"Strain", b.Strain}, {"Temperature", b.Temperature}, {"LogStress", b.LogStress}} {
 		if !(r.Range[0] > 0 && r.Range[0] < r.Range[1] && !math.IsInf(r.Range[1], 1)) {
 			return b, fmt.Errorf("%s is from %v to %v, must rise between positive finite numbers", r.name, r.Range[0], r.Range[1])
+		}
+	}
+	for i, r := range b.Internal {
+		if !(r[0] < r[1]) || math.IsInf(r[1]-r[0], 1) {
+			return b, fmt.Errorf("Internal %d is from %v to %v, must rise between finite numbers", i, r[0], r[1])
 		}
 	}
 	if !(b.DerivativeTolerance > 0 && b.DerivativeTolerance <= 1e-2) {

@@ -213,7 +213,7 @@ func TestUnusableBoxIsAFailure(t *testing.T) {
 		{"DerivativeTolerance is NaN, must be above 0 and at most 0.01", func(b *Box) { b.DerivativeTolerance = math.NaN() }},
 		{"DerivativeTolerance is 0.1, must", func(b *Box) { b.DerivativeTolerance = 0.1 }},
 		{"number of Points is 49, must be 50 or more", func(b *Box) { b.Points = 49 }},
-		{"set of Claims is 0, must be RateOnly or a union of the others: RateOnly, Logarithmic, Explainer", func(b *Box) { b.Claims = 0 }},
+		{"set of Claims is 0, must be RateOnly or a union of the others: RateOnly, Logarithmic, Explainer, Evolving", func(b *Box) { b.Claims = 0 }},
 		{"set of Claims is 11, must", func(b *Box) { b.Claims = RateOnly | Logarithmic }},
 		{"set of Claims is 1000000, must", func(b *Box) { b.Claims = 64 }},
 	}

@@ -36,6 +36,14 @@ var rules = []rule{
 	{"log exponent of temperature", Logarithmic, exponentOf(temperature)},
 	{"logarithm at zero", Logarithmic, logAtZero},
 	{"explains what is undefined", Explainer, explains},
+	{"sound variables", Evolving, variablesSound},
+	{"evolution at the start", Evolving, initialRate},
+	{"evolution finite", Evolving, evolutionFinite},
+	{"derivatives of the evolution", Evolving, evolutionDerivatives},
+	{"evolution of NaN is NaN", Evolving, evolutionNotANumber},
+	{"blind to the principal stress", Evolving, blindToPrincipal},
+	{"evolution has the same bits", Evolving, evolutionSameBits},
+	{"evolution without allocation", Evolving, evolutionNoAllocation},
 }
 
 func finiteInTheBox(x *examination, y *tally) {

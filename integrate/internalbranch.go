@@ -1,0 +1,163 @@
+package integrate
+
+import (
+	"math"
+
+	"example.com/holdtime/creeplaw"
+)
+
+// bearable is the feedback up to which a solution is taken to be the one connected to Δt → 0.
+const bearable = 0.4
+
+// contracts reports whether the solution at x is surely the one connected to Δt → 0.
+//
+// Along the curve of solutions from Δt = 0 the equations can only turn back, or have a second solution, where the feedback of
+// the variables on themselves and on each other, directly and by way of the creep rate and the stress, comes to 1: where the
+// determinant of the equations vanishes. What is bounded here is the sum of the terms that lower it; stable parts, such as
+// saturation, are left out. A variable may be looked at per time (Rᵢ) or per creep strain (Rᵢ - Δvᵢ F), which has the same
+// solutions; the better of the two counts.
+//
+// The terms grow along the curve with the increments of the variables. An increment Δt v̇ ~ u (1-u)^(χ-n), χ the stress
+// exponent of v̇ and n that of ṗ, grows up to the end too if χ ≤ n, and otherwise passes through a maximum at u = 1/(1+χ-n).
+// The bound is formed twice, from the law at the end of the step and from the law at the trial state, because the exponents
+// need not be the same everywhere.
+func (c *coupled) contracts(x *node, t *trialRates) bool {
+	return c.feedbackAtEnd(x) <= bearable && c.feedbackFromTrial(x, t) <= bearable
+}
+
+func (c *coupled) feedbackAtEnd(x *node) float64 {
+	feedback, slope := 0.0, 1.0
+	if c.creeps {
+		slope = x.jacobian[c.count][c.count]
+		if !(c.exponent(x, &x.rate.Creep) > 0 && slope > 0) {
+			return math.Inf(1)
+		}
+		feedback = math.Max(0, x.share*x.rate.Creep.ByLogStrain)
+	}
+	for i := range c.count {
+		perTime, perStrain := 0.0, 0.0
+		excess := c.excess(x, i)
+		byCreep := x.sensitivity[i] * x.increment[i]
+		if c.creeps {
+			byZ := -x.sensitivity[i] * x.jacobian[i][c.count] / slope
+			perTime = math.Max(0, byZ)
+			perStrain = math.Max(0, byCreep+byZ)
+			if excess > 0 { // this term changes its sign on the way: take its parts
+				perStrain = math.Abs(byCreep) * math.Max(1, excess)
+			}
+		}
+		for j := range c.count {
+			a := x.jacobian[i][j]
+			if i == j {
+				perTime += math.Max(0, 1-a)
+				perStrain += math.Max(0, 1-a-byCreep)
+				continue
+			}
+			b := x.jacobian[j][i]
+			perTime += math.Sqrt(math.Abs(a * b))
+			perStrain += math.Sqrt(math.Abs((a + x.increment[i]*x.sensitivity[j]) * (b + x.increment[j]*x.sensitivity[i])))
+		}
+		if !c.creeps {
+			perStrain = perTime
+		}
+		feedback += math.Min(perTime, perStrain) * peak(x.fraction, x.odds, excess)
+	}
+	return feedback
+}
+
+// excess is by how much the stress exponent of a variable's rate is larger than that of the creep rate, χ - n.
+func (c *coupled) excess(x *node, i int) float64 {
+	r := &x.rate.Internal[i]
+	if !c.creeps || r.Value == 0 {
+		return 0
+	}
+	return c.exponent(x, &r.Partials)/r.Value - c.exponent(x, &x.rate.Creep)
+}
+
+// peak is the largest increment of a variable on the curve up to the fraction u over the increment at its end.
+func peak(fraction, odds, excess float64) float64 {
+	if !(fraction*(1+excess) > 1) {
+		return 1
+	}
+	top := 1 / (1 + excess)
+	return top / fraction * math.Exp(excess*(math.Log1p(-top)+math.Log1p(odds)))
+}
+
+// trialRates is what the law says at the trial state, kept to judge the solution by.
+type trialRates struct {
+	perTime     [creeplaw.MaxVariables]float64 // scale of the increments: Δt e^LogScale
+	perStrain   [creeplaw.MaxVariables]float64 // q/3G e^(LogScale - LogRate)
+	value       [creeplaw.MaxVariables]float64 // v̇ in that scale
+	by          [creeplaw.MaxVariables][creeplaw.MaxVariables]float64
+	excess      [creeplaw.MaxVariables]float64
+	sensitivity [creeplaw.MaxVariables]float64
+	exponent    float64 // n
+}
+
+// keep takes what the law says from x. All is over the units of the variables.
+func (c *coupled) keep(t *trialRates, x *node) {
+	m := c.memory
+	t.exponent = c.exponent(x, &x.rate.Creep)
+	for i := range c.count {
+		r := &x.rate.Internal[i]
+		t.perTime[i] = x.growth[i]
+		if c.creeps {
+			t.perStrain[i] = math.Exp(c.logElastic+r.LogScale-x.rate.LogRate) / m.unit[i]
+		}
+		t.value[i] = r.Value
+		t.excess[i] = c.excess(x, i)
+		t.sensitivity[i] = x.rate.Creep.ByInternal[i] * m.unit[i]
+		for j := range c.count {
+			t.by[i][j] = r.ByInternal[j] * m.unit[j]
+		}
+	}
+}
+
+func (c *coupled) feedbackFromTrial(x *node, t *trialRates) (feedback float64) {
+	if c.creeps && !(t.exponent > 0) {
+		return math.Inf(1)
+	}
+	var scale [creeplaw.MaxVariables]float64
+	for i := range c.count {
+		scale[i] = t.perTime[i]
+		if c.creeps {
+			scale[i] = math.Min(scale[i], t.perStrain[i]*x.fraction*crestUpTo(x.fraction, t.excess[i]))
+		}
+	}
+	for i := range c.count {
+		a := t.sensitivity[i]
+		increment := scale[i] * t.value[i]
+		perTime, perStrain := 0.0, 0.0
+		if byCreep := a * increment; byCreep > 0 {
+			perStrain = byCreep
+		} else if c.creeps {
+			perTime = -byCreep * math.Max(0, 1+t.excess[i]/t.exponent)
+			perStrain = -byCreep * math.Max(0, t.excess[i])
+		}
+		for j := range c.count {
+			own := scale[i] * t.by[i][j]
+			if i == j {
+				perTime += math.Max(0, own)
+				perStrain += math.Max(0, own-a*increment)
+				continue
+			}
+			back := scale[j] * t.by[j][i]
+			perTime += math.Sqrt(math.Abs(own * back))
+			perStrain += math.Sqrt(math.Abs((own - increment*t.sensitivity[j]) * (back - scale[j]*t.value[j]*a)))
+		}
+		if !c.creeps {
+			perStrain = perTime
+		}
+		feedback += math.Min(perTime, perStrain)
+	}
+	return feedback
+}
+
+// crestUpTo is the largest value of u (1-u)^excess up to the fraction, over the fraction.
+func crestUpTo(fraction, excess float64) float64 {
+	if !(fraction*(1+excess) > 1) {
+		return 1 // at most
+	}
+	top := 1 / (1 + excess)
+	return top / fraction * math.Exp(excess*math.Log1p(-top))
+}

@@ -1,0 +1,216 @@
+package integrate
+
+import (
+	"math"
+)
+
+// solve finds the solution at the end of the step that is connected to Δt → 0, in x. Most steps are short of the trouble that
+// internal variables can make: Newton's iteration from a good guess finds a solution, and a bound on the feedback between
+// variables and creep proves that it is the only one in reach (see contracts). The rest is left to walk, which follows the
+// curve of solutions from its beginning.
+func (c *coupled) solve(x *node) Code {
+	x.v, x.logTime = c.before, c.logTime
+	c.creeps = false
+	if v := c.evaluate(x); v == undefined {
+		return LawUndefined
+	}
+	level := c.logTime - c.logElastic + x.rate.LogRate
+	if c.trial > 0 && (level >= negligible || c.start == 0 && math.IsInf(level, 1)) {
+		c.creeps = true
+	} else if c.count == 0 {
+		return 0
+	}
+	var t trialRates
+	c.keep(&t, x)
+	if c.guess(x) && c.newton(x, c.size(), exact) == fine && !c.atLimit(x) && c.contracts(x, &t) {
+		return 0
+	}
+	return c.walk(x)
+}
+
+// guess sets x near the solution from the law at the trial state, as if it were a power law in stress. It reports false where
+// that leads nowhere.
+func (c *coupled) guess(x *node) bool {
+	if c.creeps && !c.guessCreep(x) {
+		return false
+	}
+	logKept := 0.0
+	if c.creeps {
+		logKept = -math.Log1p(x.odds)
+	}
+	shift := 0.0
+	for i := range c.count {
+		r := &x.rate.Internal[i]
+		increment := x.increment[i]
+		if increment == 0 {
+			continue
+		}
+		if n := c.exponent(x, &r.Partials) / r.Value; c.creeps && n != 0 {
+			increment = r.Value * math.Exp(c.logTime+r.LogScale+n*logKept) / c.memory.unit[i]
+		}
+		// The variable's own feedback, to second order.
+		feedback := increment * r.ByInternal[i] * c.memory.unit[i] / r.Value
+		increment /= 1 - math.Min(feedback, 0.5)
+		if room := c.memory.limit[i] - x.v[i]; increment/room > 0.5 {
+			increment = 0.5 * room
+		}
+		if !finite(increment) {
+			return false
+		}
+		x.v[i] += increment
+		shift += increment * x.rate.Creep.ByInternal[i] * c.memory.unit[i]
+	}
+	if c.creeps && shift != 0 {
+		u := x.odds / (1 + x.odds)
+		shift /= 1 - u + u*math.Max(x.rate.Creep.ByLogStress, 0)
+		x.odds *= math.Exp(math.Max(-1, math.Min(1, shift)))
+	}
+	return true
+}
+
+// guessCreep sets z as relaxation.solve does, with the variables as they were.
+func (c *coupled) guessCreep(x *node) bool {
+	l := &x.rate.Creep
+	level, slope := c.logTime-c.logElastic+x.rate.LogRate, 1.0
+	switch hardening := -l.ByLogStrain; {
+	case math.IsInf(x.rate.LogRate, 1):
+		x.odds = 1 // hardening from zero strain: look from half the strain the step could reach
+		if c.evaluate(x); !finite(x.rate.LogRate) {
+			return false
+		}
+		slope = 1 - math.Min(l.ByLogStrain, 0)
+		level = (c.logTime - c.logElastic + x.rate.LogRate) / slope
+	case hardening > 0 && c.start < c.elastic:
+		if l := (level - hardening*math.Log(c.elastic/c.start)) / (1 + hardening); l < level {
+			level, slope = l, 1+hardening
+		}
+	}
+	n := math.Max(c.exponent(x, l), 0) / slope
+	x.odds = firstGuess(level, n)
+	return true
+}
+
+// effort is how far an iteration goes.
+type effort struct {
+	corrections int
+	done        float64 // size of what is left
+	first       float64 // largest first correction that is trusted
+}
+
+var (
+	exact = effort{corrections: 9, done: 1e-13, first: math.Inf(1)}
+	rough = effort{corrections: 4, done: 1e-6, first: 0.5}
+)
+
+// newton corrects x with one coordinate held: ln Δt for the solution at a given time, another to follow the curve.
+func (c *coupled) newton(x *node, held int, e effort) verdict {
+	v, _ := c.correct(x, held, e)
+	return v
+}
+
+// correct is newton that also tells the size of its first correction, which is the error of the prediction. An iteration that
+// contracts is taken as done when what it is going to leave is negligible; the law is not asked again there.
+func (c *coupled) correct(x *node, held int, e effort) (v verdict, first float64) {
+	before := 1.0
+	for i := range e.corrections {
+		if v := c.evaluate(x); v != fine {
+			return v, first
+		}
+		var d direction
+		if !c.linear(x, held, &d, nil) {
+			return tooFar, first
+		}
+		size, relative := c.measure(x, &d)
+		if i == 0 {
+			if first = size; !(size <= e.first) {
+				return tooFar, first
+			}
+		}
+		c.move(x, &d, c.leash(x, &d, size))
+		contraction := math.Min(1, relative/before)
+		switch {
+		case relative*contraction <= e.done && size < 4e-9+e.done:
+			return fine, first
+		case contraction > 0.1 && relative < 1e-7:
+			return c.stagnation(x, relative), first
+		}
+		before = relative
+	}
+	return tooFar, first
+}
+
+// stagnation accepts corrections that no longer shrink if they are rounding.
+func (c *coupled) stagnation(x *node, size float64) verdict {
+	noise := math.Abs(x.logTime) + math.Abs(c.logElastic) + math.Abs(x.rate.LogRate) + math.Abs(x.rate.Creep.ByLogStress)
+	for i := range c.count {
+		own := math.Abs(x.v[i]) + math.Abs(c.memory.initial[i]/c.memory.unit[i])
+		noise += math.Abs(x.sensitivity[i])*own + math.Abs(x.v[i]/x.increment[i])
+	}
+	if size <= 16*epsilon*noise {
+		return fine
+	}
+	return tooFar
+}
+
+// direction is a change of the coordinates: the variables, z where there is creep, ln Δt.
+type direction [unknowns + 1]float64
+
+// measure is the size of a correction by what it does to the rates, and relative to the increments of the step.
+func (c *coupled) measure(x *node, d *direction) (size, relative float64) {
+	size = math.Abs(d[c.size()])
+	if c.creeps {
+		size = math.Max(size, math.Abs(d[c.count])*(1+x.fraction*math.Abs(x.rate.Creep.ByLogStress)))
+	}
+	for i := range c.count {
+		dv := math.Abs(d[i])
+		if dv == 0 {
+			continue
+		}
+		size = math.Max(size, dv*c.weight(x, i))
+		relative = math.Max(relative, dv/(math.Abs(x.increment[i])+1e-4*math.Abs(x.v[i])))
+	}
+	return size, math.Max(size, relative)
+}
+
+// weight is the change of a variable that matters, inverted: what moves the creep rate by a factor e, or the way to the limit.
+func (c *coupled) weight(x *node, i int) float64 {
+	return math.Abs(x.sensitivity[i]) + 1/math.Abs(c.memory.limit[i]-x.v[i])
+}
+
+// leash is the fraction of a correction that is safe: no further than a factor of e³ in the rates, nor half way to a limit.
+func (c *coupled) leash(x *node, d *direction, size float64) float64 {
+	fraction := 1.0
+	if size > 3 {
+		fraction = 3 / size
+	}
+	for i := range c.count {
+		if room := c.memory.limit[i] - x.v[i]; fraction*d[i]/room > 0.5 {
+			fraction = 0.5 * room / d[i]
+		}
+	}
+	return fraction
+}
+
+// move goes a fraction of a direction.
+func (c *coupled) move(x *node, d *direction, fraction float64) {
+	for i := range c.count {
+		x.v[i] += fraction * d[i]
+	}
+	if c.creeps {
+		x.odds *= exponential(fraction * d[c.count])
+	}
+	x.logTime += fraction * d[c.size()]
+}
+
+// brink is the part of the way from the initial value to a limit at which the material is taken as ruptured: nearer, the
+// rounding of the variable itself shows in the rates.
+const brink = 0x1p-20
+
+func (c *coupled) atLimit(x *node) bool {
+	for i := range c.count {
+		if l := c.memory.limit[i]; !math.IsInf(l, 0) && math.Abs(l-x.v[i]) <= brink {
+			return true
+		}
+	}
+	return false
+}
