@@ -25,6 +25,8 @@ type Anand struct {
 	multiplier, inverseSensitivity     float64 // ξ, 1/m
 	hardening, logSaturation           float64 // h₀, ln ŝ
 	saturationExp, hardeningExp, start float64 // n, a, s₀
+
+	given[Law]
 }
 
 var (
@@ -72,6 +74,7 @@ func NewAnand(p AnandParameters) (Anand, error) {
 		saturationExp:      p.SaturationExponent,
 		hardeningExp:       p.HardeningExponent,
 		start:              p.InitialResistance,
+		given:              p.given(),
 	}, nil
 }
 

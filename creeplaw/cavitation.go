@@ -35,6 +35,8 @@ type cavitating struct {
 	rupture                   float64
 
 	creepFactor, ageingFactor TemperatureFactor // nil for none
+
+	arguments *CavitationParameters
 }
 
 func newCavitating(law string, p CavitationParameters) (cavitating, error) {
@@ -63,6 +65,7 @@ func newCavitating(law string, p CavitationParameters) (cavitating, error) {
 		rupture:      p.RuptureCavitation,
 		creepFactor:  p.CreepTemperature,
 		ageingFactor: p.AgeingTemperature,
+		arguments:    &p,
 	}
 	if c.rupture == 0 {
 		c.rupture = 1

@@ -21,6 +21,7 @@ type DarveauxBanerji struct {
 	exponent       float64
 	activation     float64 // Q/R [K]
 	modulus, scale ShearModulus
+	given[Law]
 }
 
 var (
@@ -54,7 +55,10 @@ func NewDarveauxBanerji(c ModulusSinh) (DarveauxBanerji, error) {
 	if err != nil {
 		return DarveauxBanerji{}, &ParameterError{darveauxName, "activation energy", c.ActivationEnergy, "at least 0 and finite"}
 	}
-	return DarveauxBanerji{math.Log(c.Prefactor), c.Exponent, arrhenius.activation, c.Modulus, c.StressScale}, nil
+	v := append([]float64{c.Prefactor, c.Exponent}, c.Modulus.values()...)
+	v = append(append(v, c.StressScale.values()...), c.ActivationEnergy)
+	return DarveauxBanerji{math.Log(c.Prefactor), c.Exponent, arrhenius.activation, c.Modulus, c.StressScale,
+		remember(darveauxForm, v...)}, nil
 }
 
 // LogRate returns the logarithm and the local exponents.
@@ -63,7 +67,7 @@ func (d DarveauxBanerji) LogRate(p Point) LogRate {
 	if !(p.Temperature > 0 && modulus > 0 && scale > 0) {
 		return undefinedLog()
 	}
-	l := Garofalo{0, 1 / scale, d.exponent}.LogRate(p)
+	l := Garofalo{coefficient: 1 / scale, exponent: d.exponent}.LogRate(p)
 	activation := d.activation / p.Temperature
 	l.Value += d.logPrefactor + math.Log(modulus/p.Temperature) - activation
 	l.ByLogTemperature = activation - 1 + p.Temperature*(d.modulus.Slope/modulus-l.ByLogStress*d.scale.Slope/scale)

@@ -21,6 +21,7 @@ import "math"
 // Deformation-Mechanism Maps, Pergamon 1982, equations 2.29–2.30 (all from memory).
 type Diffusional struct {
 	lattice, boundary diffusionTerm
+	given[Law]
 }
 
 // diffusionTerm is exp(constant - activation/T)·σ/T; a constant of -Inf leaves it out.
@@ -47,7 +48,8 @@ func NewDiffusional(atomicVolume, grainSize float64, lattice, boundary Diffusivi
 		return Diffusional{}, err
 	}
 	b.logConstant += math.Log(math.Pi)
-	return Diffusional{l, b}, nil
+	v := append(append([]float64{atomicVolume, grainSize}, lattice.values()...), boundary.values()...)
+	return Diffusional{l, b, remember(diffusionalForm, v...)}, nil
 }
 
 // NewNabarroHerring builds ṗ = 14 σΩD_v/(kT d²), diffusion through the lattice alone: atomic volume Ω [m³], grain size d
@@ -57,7 +59,8 @@ func NewNabarroHerring(atomicVolume, grainSize float64, lattice Diffusivity) (Di
 	if err != nil {
 		return Diffusional{}, err
 	}
-	return Diffusional{lattice: l, boundary: noDiffusion()}, nil
+	v := append([]float64{atomicVolume, grainSize}, lattice.values()...)
+	return Diffusional{l, noDiffusion(), remember(nabarroHerringForm, v...)}, nil
 }
 
 // NewCoble builds ṗ = 14π σΩ δD_b/(kT d³), diffusion along the grain boundaries alone: atomic volume Ω [m³], grain size d
@@ -68,7 +71,8 @@ func NewCoble(atomicVolume, grainSize float64, boundary Diffusivity) (Diffusiona
 		return Diffusional{}, err
 	}
 	b.logConstant += math.Log(math.Pi)
-	return Diffusional{lattice: noDiffusion(), boundary: b}, nil
+	v := append([]float64{atomicVolume, grainSize}, boundary.values()...)
+	return Diffusional{noDiffusion(), b, remember(cobleForm, v...)}, nil
 }
 
 func newDiffusionTerm(law, path string, volume, grain, grainExponent float64, d Diffusivity) (diffusionTerm, error) {

@@ -8,6 +8,7 @@
 //	Law          the rate and its partial derivatives     every law
 //	Logarithmic  the logarithm of the rate                every law of this package; Log adapts any other
 //	Explainer    why a point is outside the domain        laws with a limited domain
+//	Parametric   its parameters, and the law from others  every law of this package that is built from numbers
 //
 // History enters through the accumulated creep strain (strain hardening), never through a clock.
 //

@@ -16,7 +16,10 @@ import "math"
 //
 // Source: A. E. Johnson, J. Henderson, B. Kahn, Complex-Stress Creep, Relaxation and Fracture of Metallic Alloys, HMSO,
 // Edinburgh 1962 (from memory).
-type DoublePower struct{ first, second power }
+type DoublePower struct {
+	first, second power
+	given[Law]
+}
 
 var _ Logarithmic = DoublePower{}
 
@@ -29,7 +32,8 @@ func NewDoublePower(firstPrefactor, firstExponent, secondPrefactor, secondExpone
 	if err != nil {
 		return DoublePower{}, err
 	}
-	return DoublePower{newPrefactor(firstPrefactor, firstExponent), newPrefactor(secondPrefactor, secondExponent)}, nil
+	return DoublePower{newPrefactor(firstPrefactor, firstExponent), newPrefactor(secondPrefactor, secondExponent),
+		remember(doublePowerForm, firstPrefactor, firstExponent, secondPrefactor, secondExponent)}, nil
 }
 
 // NewDoublePowerAt builds ṗ = ṗₜ [(σ/σₜ)ⁿ¹ + (σ/σₜ)ⁿ²] from the rate ṗₜ [1/time] that each term gives at the transition
@@ -41,7 +45,8 @@ func NewDoublePowerAt(rate, transitionStress, firstExponent, secondExponent floa
 		return DoublePower{}, err
 	}
 	return DoublePower{newPower(rate, transitionStress, 1, firstExponent, 0),
-		newPower(rate, transitionStress, 1, secondExponent, 0)}, nil
+		newPower(rate, transitionStress, 1, secondExponent, 0),
+		remember(doublePowerAtForm, rate, transitionStress, firstExponent, secondExponent)}, nil
 }
 
 // LogRate returns the logarithm of the sum and the exponents averaged with their shares of the rate.

@@ -17,7 +17,10 @@ import "math"
 //
 // Source: P. Ludwik, Elemente der technologischen Mechanik, Springer 1909; I. Finnie, W. R. Heller, Creep of Engineering
 // Materials, McGraw-Hill 1959 (both from memory).
-type Exponential struct{ logPrefactor, scale float64 }
+type Exponential struct {
+	logPrefactor, scale float64
+	given[Law]
+}
 
 var _ Logarithmic = Exponential{}
 
@@ -28,7 +31,7 @@ func NewExponential(prefactor, stressScale float64) (Exponential, error) {
 	if err != nil {
 		return Exponential{}, err
 	}
-	return Exponential{math.Log(prefactor), stressScale}, nil
+	return Exponential{math.Log(prefactor), stressScale, remember(exponentialForm, prefactor, stressScale)}, nil
 }
 
 // LogRate returns ln A + σ/σ₀; the local exponent is σ/σ₀.

@@ -15,6 +15,7 @@ import "math"
 // Source: F. Garofalo, Trans. AIME 227 (1963) 351–356.
 type Garofalo struct {
 	logPrefactor, coefficient, exponent float64
+	given[Law]
 }
 
 var _ Logarithmic = Garofalo{}
@@ -27,7 +28,8 @@ func NewGarofalo(prefactor, stressCoefficient, exponent float64) (Garofalo, erro
 	if err != nil {
 		return Garofalo{}, err
 	}
-	return Garofalo{math.Log(prefactor), stressCoefficient, exponent}, nil
+	return Garofalo{math.Log(prefactor), stressCoefficient, exponent,
+		remember(garofaloForm, prefactor, stressCoefficient, exponent)}, nil
 }
 
 // sinhSaturation is the argument beyond which e^(-2x) is below the rounding of 1.

@@ -28,6 +28,8 @@ type KachanovRabotnov struct {
 	rupture       RuptureStress
 
 	creepFactor, damageFactor TemperatureFactor // nil for none
+
+	arguments *KachanovRabotnovParameters
 }
 
 var (
@@ -72,6 +74,7 @@ func NewKachanovRabotnov(p KachanovRabotnovParameters) (KachanovRabotnov, error)
 		rupture:      p.RuptureStress,
 		creepFactor:  p.CreepTemperature,
 		damageFactor: p.DamageTemperature,
+		arguments:    &p,
 	}
 	k.shift = math.Log(k.creep.stress / k.damage.stress)
 	return k, nil

@@ -30,6 +30,8 @@ type LiuMurakami struct {
 	rupture       RuptureStress
 
 	creepFactor, damageFactor TemperatureFactor // nil for none
+
+	arguments *LiuMurakamiParameters
 }
 
 var (
@@ -74,6 +76,7 @@ func NewLiuMurakami(p LiuMurakamiParameters) (LiuMurakami, error) {
 		rupture:      p.RuptureStress,
 		creepFactor:  p.CreepTemperature,
 		damageFactor: p.DamageTemperature,
+		arguments:    &p,
 	}
 	l.damage.logRate += math.Log(-math.Expm1(-q) / q)
 	return l, nil

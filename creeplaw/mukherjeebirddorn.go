@@ -34,6 +34,7 @@ type MukherjeeBirdDorn struct {
 	hasCore     bool
 	logCore     float64 // ln of (10/3) a_c D₀c/(b² D₀)
 	coreExcess  float64 // (Q_c - Q)/R [K]
+	given[Law]
 }
 
 var (
@@ -65,6 +66,7 @@ func NewMukherjeeBirdDorn(c DislocationCreep) (MukherjeeBirdDorn, error) {
 		exponent:    c.StressExponent,
 		activation:  c.Lattice.ActivationEnergy / GasConstant,
 		modulus:     c.Modulus,
+		given:       c.given(),
 	}
 	if c.GrainExponent != 0 {
 		m.logConstant += c.GrainExponent * math.Log(c.BurgersVector/c.GrainSize)

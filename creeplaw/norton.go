@@ -11,7 +11,10 @@ package creeplaw
 // strain nor on temperature (see WithTemperature). Negative or NaN stress gives NaN.
 //
 // Source: F. H. Norton, The Creep of Steel at High Temperatures, McGraw-Hill 1929.
-type Norton struct{ power }
+type Norton struct {
+	power
+	given[Law]
+}
 
 var _ Logarithmic = Norton{}
 
@@ -21,7 +24,7 @@ func NewNorton(prefactor, stressExponent float64) (Norton, error) {
 	if err := positive("Norton", parameter{"prefactor", prefactor}, parameter{"stress exponent", stressExponent}); err != nil {
 		return Norton{}, err
 	}
-	return Norton{newPrefactor(prefactor, stressExponent)}, nil
+	return Norton{newPrefactor(prefactor, stressExponent), remember(nortonForm, prefactor, stressExponent)}, nil
 }
 
 // NewNortonAt builds ṗ = ṗ₁ (σ/σ₁)ⁿ from one known point: the rate ṗ₁ [1/time] under the stress σ₁ [stress]. All three
@@ -32,5 +35,5 @@ func NewNortonAt(rate, stress, stressExponent float64) (Norton, error) {
 	if err != nil {
 		return Norton{}, err
 	}
-	return Norton{newPower(rate, stress, 1, stressExponent, 0)}, nil
+	return Norton{newPower(rate, stress, 1, stressExponent, 0), remember(nortonAtForm, rate, stress, stressExponent)}, nil
 }

@@ -15,6 +15,7 @@ package creeplaw
 type PowerExponential struct {
 	power power
 	scale float64
+	given[Law]
 }
 
 var _ Logarithmic = PowerExponential{}
@@ -27,7 +28,8 @@ func NewPowerExponential(prefactor, stressExponent, stressScale float64) (PowerE
 	if err != nil {
 		return PowerExponential{}, err
 	}
-	return PowerExponential{newPrefactor(prefactor, stressExponent), stressScale}, nil
+	return PowerExponential{newPrefactor(prefactor, stressExponent), stressScale,
+		remember(powerExponentialForm, prefactor, stressExponent, stressScale)}, nil
 }
 
 // LogRate returns ln A + n ln σ + σ/σ₀ and the local exponent n + σ/σ₀.

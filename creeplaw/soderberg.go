@@ -14,7 +14,10 @@ import "math"
 //
 // Source: C. R. Soderberg, The interpretation of creep tests for machine design, Trans. ASME 58 (1936) 733–743 (from
 // memory).
-type Soderberg struct{ logPrefactor, scale float64 }
+type Soderberg struct {
+	logPrefactor, scale float64
+	given[Law]
+}
 
 var _ Logarithmic = Soderberg{}
 
@@ -25,7 +28,7 @@ func NewSoderberg(prefactor, stressScale float64) (Soderberg, error) {
 	if err != nil {
 		return Soderberg{}, err
 	}
-	return Soderberg{math.Log(prefactor), stressScale}, nil
+	return Soderberg{math.Log(prefactor), stressScale, remember(soderbergForm, prefactor, stressScale)}, nil
 }
 
 // expSaturation is the argument beyond which e^(-x) is below the rounding of 1.

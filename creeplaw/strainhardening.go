@@ -19,7 +19,10 @@ import "math"
 //
 // Source: R. W. Bailey, Proc. Inst. Mech. Engrs 131 (1935) 131–349; I. Finnie, W. R. Heller, Creep of Engineering
 // Materials, McGraw-Hill 1959 (strain-hardening form).
-type BaileyNorton struct{ power }
+type BaileyNorton struct {
+	power
+	given[Law]
+}
 
 var _ Logarithmic = BaileyNorton{}
 
@@ -37,7 +40,8 @@ func NewBaileyNorton(prefactor, stressExponent, timeExponent float64) (BaileyNor
 	m := timeExponent
 	w := newPrefactor(prefactor, stressExponent)
 	strain := math.Exp(w.logRate) // the curve's strain after unit time at the reference stress
-	return BaileyNorton{baileyPower(w.logRate, w.stress, strain, 0, stressExponent, m)}, nil
+	return BaileyNorton{baileyPower(w.logRate, w.stress, strain, 0, stressExponent, m),
+		remember(baileyForm, prefactor, stressExponent, timeExponent)}, nil
 }
 
 // NewBaileyNortonAt builds the law from one point of a measured curve: the creep strain [-] that the stress [stress] made
@@ -53,7 +57,8 @@ func NewBaileyNortonAt(strain, stress, time, stressExponent, timeExponent float6
 	if err := checkTimeExponent(law, timeExponent); err != nil {
 		return BaileyNorton{}, err
 	}
-	return BaileyNorton{baileyPower(math.Log(strain), stress, strain, math.Log(time), stressExponent, timeExponent)}, nil
+	return BaileyNorton{baileyPower(math.Log(strain), stress, strain, math.Log(time), stressExponent, timeExponent),
+		remember(baileyAtForm, strain, stress, time, stressExponent, timeExponent)}, nil
 }
 
 // baileyPower is the rate m·strain/time at the point (stress, strain) that the curve passes at that time.
@@ -82,7 +87,10 @@ func checkTimeExponent(law string, m float64) error {
 // stress or strain gives NaN. Under constant stress p = [(1-k) A σⁿ t]^(1/(1-k)).
 //
 // Source: I. Finnie, W. R. Heller, Creep of Engineering Materials, McGraw-Hill 1959.
-type StrainHardening struct{ power }
+type StrainHardening struct {
+	power
+	given[Law]
+}
 
 var _ Logarithmic = StrainHardening{}
 
@@ -98,7 +106,7 @@ func NewStrainHardening(prefactor, stressExponent, strainExponent float64) (Stra
 	}
 	w := newPrefactor(prefactor, stressExponent)
 	w.strainExp, w.dependsOnHistory = strainExponent, strainExponent != 0
-	return StrainHardening{w}, nil
+	return StrainHardening{w, remember(hardeningForm, prefactor, stressExponent, strainExponent)}, nil
 }
 
 // NewStrainHardeningAt builds ṗ = ṗ₁ (σ/σ₁)ⁿ (p/p₁)ᵏ from the rate ṗ₁ [1/time] known at the stress σ₁ [stress] and creep
@@ -113,7 +121,8 @@ func NewStrainHardeningAt(rate, stress, strain, stressExponent, strainExponent f
 	if err := checkStrainExponent(law, strainExponent); err != nil {
 		return StrainHardening{}, err
 	}
-	return StrainHardening{newPower(rate, stress, strain, stressExponent, strainExponent)}, nil
+	return StrainHardening{newPower(rate, stress, strain, stressExponent, strainExponent),
+		remember(hardeningAtForm, rate, stress, strain, stressExponent, strainExponent)}, nil
 }
 
 func checkStrainExponent(law string, k float64) error {

@@ -24,6 +24,7 @@ type TemperatureFactor interface {
 type Arrhenius struct {
 	activation       float64 // Q/R [K]
 	inverseReference float64 // 1/T₀ [1/K]
+	given[TemperatureFactor]
 }
 
 var _ TemperatureFactor = Arrhenius{}
@@ -33,7 +34,7 @@ func NewArrhenius(activationEnergy float64) (Arrhenius, error) {
 	if !(activationEnergy >= 0) || math.IsInf(activationEnergy, 1) {
 		return Arrhenius{}, &ParameterError{"Arrhenius", "activation energy", activationEnergy, "at least 0 and finite"}
 	}
-	return Arrhenius{activation: activationEnergy / GasConstant}, nil
+	return Arrhenius{activation: activationEnergy / GasConstant, given: remember(arrheniusForm, activationEnergy)}, nil
 }
 
 // NewArrheniusAt builds the factor that is one at the reference temperature T₀ [K], positive and finite: the wrapped law
@@ -47,6 +48,7 @@ func NewArrheniusAt(activationEnergy, referenceTemperature float64) (Arrhenius, 
 		return Arrhenius{}, err
 	}
 	a.inverseReference = 1 / referenceTemperature
+	a.given = remember(arrheniusAtForm, activationEnergy, referenceTemperature)
 	return a, nil
 }
 

@@ -280,6 +280,7 @@ func (t Tabulated) CheckPoint(p Point) error {
 type FactorTable struct {
 	table      temperatureTable
 	logFactors []float64
+	given[TemperatureFactor]
 }
 
 var (
@@ -295,7 +296,8 @@ func NewFactorTable(temperatures, factors []float64, options TableOptions) (Fact
 	if err != nil {
 		return FactorTable{}, err
 	}
-	f := FactorTable{table, make([]float64, len(factors))}
+	f := FactorTable{table, make([]float64, len(factors)),
+		remember(factorTableForm(options), slices.Concat(temperatures, factors)...)}
 	for i, v := range factors {
 		if err := positive(name, parameter{"factor", v}); err != nil {
 			return FactorTable{}, err

@@ -16,6 +16,7 @@ import "math"
 type TwoArrhenius struct {
 	transition   float64
 	below, above arrheniusBranch
+	given[TemperatureFactor]
 }
 
 // arrheniusBranch is f exp(-q/T), with ln f relative to the transition, where the factor is of moderate size.
@@ -43,6 +44,7 @@ func NewTwoArrhenius(below, above ArrheniusBranch, transition float64) (TwoArrhe
 	}
 	t.below.logAtTransition = math.Log(below.Prefactor) - t.below.activation/transition
 	t.above.logAtTransition = math.Log(above.Prefactor) - t.above.activation/transition
+	t.given = remember(twoArrheniusForm, below.ActivationEnergy, above.ActivationEnergy, transition, below.Prefactor, above.Prefactor)
 	return t, nil
 }
 
@@ -58,7 +60,8 @@ func NewTwoArrheniusAt(activationBelow, activationAbove, transition float64) (Tw
 		return TwoArrhenius{}, err
 	}
 	return TwoArrhenius{transition, arrheniusBranch{0, activationBelow / GasConstant},
-		arrheniusBranch{0, activationAbove / GasConstant}}, nil
+		arrheniusBranch{0, activationAbove / GasConstant},
+		remember(twoArrheniusAtForm, activationBelow, activationAbove, transition)}, nil
 }
 
 // LogFactor returns ln f and Q/(RT) of the branch in use.

@@ -88,7 +88,11 @@ type Converted struct {
 	law          Logarithmic
 	stress, time float64 // s and c
 	logTime      float64
+	units        *ownAndWanted
 }
+
+// ownAndWanted are the units of the law within and those it was taken to.
+type ownAndWanted struct{ own, wanted Units }
 
 var (
 	_ Logarithmic = Converted{}
@@ -112,6 +116,7 @@ func InUnits(law Law, own, wanted Units) (Converted, error) {
 	}
 	c := Converted{law: Log(law), stress: float64(wanted.Stress / own.Stress), time: float64(wanted.Time / own.Time)}
 	c.logTime = math.Log(c.time)
+	c.units = &ownAndWanted{own, wanted}
 	return c, nil
 }
 
