@@ -22,8 +22,8 @@ type Expansion struct {
 	Reference float64
 }
 
-// strain is εₜ and its derivative by temperature.
-func (x *Expansion) strain(temperature float64) (value, slope float64) {
+// At returns εₜ [-] and its derivative by temperature [1/K] at the absolute temperature T [K]; NaN outside a table.
+func (x Expansion) At(temperature float64) (value, slope float64) {
 	if x.none() {
 		return 0, 0
 	}
@@ -32,7 +32,7 @@ func (x *Expansion) strain(temperature float64) (value, slope float64) {
 	return alpha * dT, alpha + byT*dT
 }
 
-func (x *Expansion) none() bool { return x.Mean.temperature == nil && x.Mean.constant == 0 }
+func (x Expansion) none() bool { return x.Mean.temperature == nil && x.Mean.constant == 0 }
 
 // moduli are the elastic constants at one temperature with their derivatives.
 type moduli struct {

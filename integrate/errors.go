@@ -92,13 +92,14 @@ func (e *MaterialError) Error() string {
 
 // TableError says which row of a table over temperature is at fault.
 type TableError struct {
-	Row   int     // counted from 0
-	Value float64 // the value at fault
-	Want  string  // what it must be
+	Row      int     // counted from 0
+	Quantity string  // "temperature", "value" or "number of values"
+	Value    float64 // what it was
+	Want     string  // what it must be
 }
 
 func (e *TableError) Error() string {
-	return fmt.Sprintf("integrate: table row %d has %v, want %s", e.Row, e.Value, e.Want)
+	return fmt.Sprintf("integrate: table row %d: %s is %v, must be %s", e.Row, e.Quantity, e.Value, e.Want)
 }
 
 // UpdateError explains a Code: it names the quantity at fault and its value. errors.Is finds the Code in it.

@@ -33,7 +33,8 @@ type Estimate struct {
 //
 // Backward Euler errs by C Δt² in one step, by half of that in two halves: the error of the single step is taken as twice
 // the difference. Where hardening starts from zero strain the creep strain grows as a fractional power of time and the
-// estimate is rough, but it still falls with the step. tolerance is the Relative error the caller wants for one step, above
+// estimate is rough, but it still falls with the step. The strain is taken as prescribed: a compliant structure, whose strain
+// within the step follows from its own equilibrium, doubles its steps at the level of the structure. tolerance is the Relative error the caller wants for one step, above
 // 0; it only serves the suggestion.
 //
 // The error is that of Step for any of the three steps, or BadIncrement for a start or a tolerance that is not a number to

@@ -129,5 +129,5 @@ func ExampleMaterial_Explain() {
 	// Output:
 	// <nil>
 	// true false
-	// integrate: the temperature is outside the range of a tabulated property: temperature is 20
+	// integrate: the temperature is outside the range of a tabulated property: temperature for Young's modulus is 20
 }

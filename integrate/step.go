@@ -15,10 +15,14 @@ type Increment struct {
 }
 
 // Result is what a step gives back.
+//
+// The tangent is symmetric whenever the law sees only the von Mises stress. A step long enough to relax a point completely
+// has a tangent without deviatoric stiffness: that is correct, and a host structure of such points alone is singular, so a
+// host that meets it should cut the step.
 type Result struct {
 	Stress        tensor.Sym     // σ at the end of the step [stress]
 	State         State          // the state at the end of the step
-	Tangent       tensor.Tangent // ∂σ/∂ε of the discrete update, symmetric [stress]
+	Tangent       tensor.Tangent // ∂σ/∂ε of the discrete update [stress]; see below
 	ByTemperature tensor.Sym     // ∂σ/∂T of the discrete update at fixed strain [stress/K]
 	CreepStep     float64        // Δp: equivalent creep strain of the step [-]
 	Iterations    int            // corrections the scalar solve made
@@ -43,17 +47,19 @@ func (m *Material) Step(out *Result, old *State, inc Increment) error {
 }
 
 func (m *Material) step(out *Result, old *State, inc *Increment) Code {
-	t, ok := m.trialState(old, inc)
-	if !(ok && inc.Dt >= 0 && inc.Temperature > 0 && old.Equivalent >= 0 && finite(inc.Dt+inc.Temperature+old.Equivalent)) {
+	var t trial
+	if ok := t.set(m, old, inc); !(ok && inc.Dt >= 0 && inc.Temperature > 0 && old.Equivalent >= 0 && finite(inc.Dt+inc.Temperature+old.Equivalent)) {
 		return refusal(old, inc)
+	}
+	if m.memory.law != nil {
+		return m.stepInternal(out, old, inc, &t)
 	}
 	x := relaxed{kept: 1, strain: old.Equivalent}
 	problem := relaxation{law: m.law, trial: 3 * t.shear * t.equivalent, elastic: t.equivalent, start: old.Equivalent,
 		temperature: inc.Temperature}
 	if inc.Dt > 0 && t.equivalent > 0 {
 		problem.logTime = math.Log(inc.Dt / t.equivalent)
-		var code Code
-		if x, code = problem.solve(); code != 0 {
+		if code := problem.solve(&x); code != 0 {
 			return code
 		}
 	}
@@ -75,21 +81,32 @@ type trial struct {
 }
 
 func (m *Material) trialState(old *State, inc *Increment) (t trial, ok bool) {
-	t.moduli = m.moduliAt(inc.Temperature)
-	e := inc.Strain.Sub(old.Creep)
-	t.volumetric = e.Trace()
-	mean := t.volumetric / 3
-	e[tensor.XX] -= mean
-	e[tensor.YY] -= mean
-	e[tensor.ZZ] -= mean
-	t.deviator = e
-	t.equivalent = math.Sqrt((2.0 / 3) * e.Dot(e))
+	ok = t.set(m, old, inc)
+	return t, ok
+}
+
+// set forms the trial state, and reports false where it is not a number to work with.
+func (t *trial) set(m *Material, old *State, inc *Increment) bool {
+	if m.isConstant {
+		t.moduli = m.constant
+	} else {
+		t.moduli = m.elastic.at(inc.Temperature)
+	}
+	xx, yy, zz := inc.Strain[0]-old.Creep[0], inc.Strain[1]-old.Creep[1], inc.Strain[2]-old.Creep[2]
+	yz, xz, xy := inc.Strain[3]-old.Creep[3], inc.Strain[4]-old.Creep[4], inc.Strain[5]-old.Creep[5]
+	volumetric := xx + yy + zz
+	mean := volumetric / 3
+	xx, yy, zz = xx-mean, yy-mean, zz-mean
+	t.deviator = tensor.Sym{xx, yy, zz, yz, xz, xy}
+	t.equivalent = math.Sqrt((2.0 / 3) * (xx*xx + yy*yy + zz*zz + 2*(yz*yz+xz*xz+xy*xy)))
+	t.expansion = 0
 	if m.expands {
-		free, byT := m.expansion.strain(inc.Temperature)
-		t.volumetric -= 3 * free
+		free, byT := m.expansion.At(inc.Temperature)
+		volumetric -= 3 * free
 		t.expansion = byT
 	}
-	return t, t.bulk > 0 && t.shear > 0 && finite(t.volumetric+t.equivalent)
+	t.volumetric = volumetric
+	return t.bulk > 0 && t.shear > 0 && finite(volumetric+t.equivalent)
 }
 
 // refusal finds the code for a step whose trial state is not a number to work with.
@@ -133,21 +150,20 @@ func (a *relaxation) linearise(x *relaxed) (linearised, bool) {
 	}, true
 }
 
-// write fills the result. Everything read from old has been read before its first line, so old may be &out.State.
+// write fills the result. Each component of old is read before the same one of out.State is written, so old may be &out.State.
 func (out *Result) write(old *State, t *trial, x *relaxed, d linearised) {
-	start := *old
-	twoG := 2 * t.shear
+	keep := 2 * t.shear * x.kept
 	mean := t.bulk * t.volumetric
-	keep := twoG * x.kept
-	for i := range out.Stress {
-		out.Stress[i] = keep * t.deviator[i]
-		out.State.Creep[i] = start.Creep[i] + x.fraction*t.deviator[i]
+	for i, e := range t.deviator {
+		out.Stress[i] = keep * e
+		out.State.Creep[i] = old.Creep[i] + x.fraction*e
 	}
 	out.Stress[tensor.XX] += mean
 	out.Stress[tensor.YY] += mean
 	out.Stress[tensor.ZZ] += mean
 	out.CreepStep = x.fraction * t.equivalent
-	out.State.Equivalent = start.Equivalent + out.CreepStep
+	out.State.Equivalent = old.Equivalent + out.CreepStep
+	out.State.Internal = old.Internal
 	out.Iterations, out.Residual = x.iterations, x.residual
 
 	var n tensor.Sym // flow direction s/σₑ, the same for trial and end
@@ -166,23 +182,27 @@ func (out *Result) write(old *State, t *trial, x *relaxed, d linearised) {
 }
 
 // fillTangent writes K I⊗I + keep (I - ⅓ I⊗I) + along n⊗n. The upper half is computed and mirrored, so that the tangent is
-// symmetric to the bit whatever the compiler fuses.
+// symmetric to the bit whatever the compiler fuses; written out, it takes half the time of loops.
 func fillTangent(c *tensor.Tangent, bulk, keep, along float64, n *tensor.Sym) {
-	lame := bulk - keep/3
-	for i := 0; i < 6; i++ {
-		scaled := along * n[i]
-		for j := i; j < 6; j++ {
-			v := scaled * n[j]
-			c[i][j], c[j][i] = v, v
-		}
-	}
-	for i := 0; i < 3; i++ {
-		for j := 0; j < 3; j++ {
-			c[i][j] += lame
-		}
-		c[i][i] += keep
-		c[i+3][i+3] += keep / 2
-	}
+	n0, n1, n2, n3, n4, n5 := n[0], n[1], n[2], n[3], n[4], n[5]
+	lame, half := bulk-keep/3, keep/2
+	direct := lame + keep
+	a := along * n0
+	c01, c02, c03, c04, c05 := lame+a*n1, lame+a*n2, a*n3, a*n4, a*n5
+	c[0][0], c[0][1], c[0][2], c[0][3], c[0][4], c[0][5] = direct+a*n0, c01, c02, c03, c04, c05
+	a = along * n1
+	c12, c13, c14, c15 := lame+a*n2, a*n3, a*n4, a*n5
+	c[1][0], c[1][1], c[1][2], c[1][3], c[1][4], c[1][5] = c01, direct+a*n1, c12, c13, c14, c15
+	a = along * n2
+	c23, c24, c25 := a*n3, a*n4, a*n5
+	c[2][0], c[2][1], c[2][2], c[2][3], c[2][4], c[2][5] = c02, c12, direct+a*n2, c23, c24, c25
+	a = along * n3
+	c34, c35 := a*n4, a*n5
+	c[3][0], c[3][1], c[3][2], c[3][3], c[3][4], c[3][5] = c03, c13, c23, half+a*n3, c34, c35
+	a = along * n4
+	c45 := a * n5
+	c[4][0], c[4][1], c[4][2], c[4][3], c[4][4], c[4][5] = c04, c14, c24, c34, half+a*n4, c45
+	c[5][0], c[5][1], c[5][2], c[5][3], c[5][4], c[5][5] = c05, c15, c25, c35, c45, half+along*n5*n5
 }
 
 // Explain tells why a step was refused. It takes the error of Step and the same arguments, and returns an *UpdateError that
@@ -199,7 +219,7 @@ func (m *Material) Explain(err error, old *State, inc Increment) error {
 	case BadState:
 		return old.fault()
 	case OutsideTable:
-		return &UpdateError{Code: code, Quantity: "temperature", Value: inc.Temperature}
+		return &UpdateError{Code: code, Quantity: "temperature for " + m.tableWithout(inc.Temperature), Value: inc.Temperature}
 	}
 	e := &UpdateError{Code: code, Quantity: "time step", Value: inc.Dt}
 	if t, ok := m.trialState(old, &inc); ok {
@@ -209,6 +229,19 @@ func (m *Material) Explain(err error, old *State, inc Increment) error {
 		}
 	}
 	return e
+}
+
+// tableWithout names the tabulated property that is undefined at a temperature.
+func (m *Material) tableWithout(temperature float64) string {
+	for _, p := range []struct {
+		name  string
+		table Table
+	}{{"Young's modulus", m.elastic.Young}, {"Poisson's ratio", m.elastic.Poisson}, {"thermal expansion", m.expansion.Mean}} {
+		if low, high := p.table.Range(); !(temperature >= low && temperature <= high) {
+			return p.name
+		}
+	}
+	return "a property"
 }
 
 var componentNames = [6]string{"xx", "yy", "zz", "yz", "xz", "xy"}

@@ -23,17 +23,17 @@ func Constant(value float64) Table { return Table{constant: value} }
 // many finite values. The slices are copied. A fault is a *TableError.
 func NewTable(temperature, value []float64) (Table, error) {
 	if len(temperature) != len(value) || len(temperature) < 2 {
-		return Table{}, &TableError{Row: min(len(temperature), len(value)), Value: float64(len(value)),
-			Want: "as many values as temperatures, at least two"}
+		return Table{}, &TableError{Row: min(len(temperature), len(value)), Quantity: "number of values",
+			Value: float64(len(value)), Want: "that of the temperatures, and at least two"}
 	}
 	for i, t := range temperature {
 		switch {
 		case !(t > 0) || math.IsInf(t, 1):
-			return Table{}, &TableError{i, t, "a positive, finite temperature"}
+			return Table{}, &TableError{i, "temperature", t, "positive and finite"}
 		case i > 0 && !(t > temperature[i-1]):
-			return Table{}, &TableError{i, t, "a temperature above the one before it"}
+			return Table{}, &TableError{i, "temperature", t, "above the one before it"}
 		case !finite(value[i]):
-			return Table{}, &TableError{i, value[i], "a finite value"}
+			return Table{}, &TableError{i, "value", value[i], "finite"}
 		}
 	}
 	return Table{temperature: append([]float64(nil), temperature...), value: append([]float64(nil), value...)}, nil
@@ -46,7 +46,7 @@ func (t Table) Held() Table {
 }
 
 // At returns the property and its derivative by temperature [1/K] at the absolute temperature T [K]; NaN where undefined.
-func (t *Table) At(temperature float64) (value, slope float64) {
+func (t Table) At(temperature float64) (value, slope float64) {
 	if t.temperature == nil {
 		return t.constant, 0
 	}
@@ -68,8 +68,17 @@ func (t *Table) At(temperature float64) (value, slope float64) {
 	return t.value[i+1] - slope*(high-temperature), slope
 }
 
+// Range returns the lowest and the highest temperature [K] at which the table is defined: 0 and +Inf for a constant and for a
+// table that is Held.
+func (t Table) Range() (lowest, highest float64) {
+	if t.temperature == nil || t.held {
+		return 0, math.Inf(1)
+	}
+	return t.temperature[0], t.temperature[len(t.temperature)-1]
+}
+
 // each calls f for every value the property is given at, with the temperature (0 for a constant).
-func (t *Table) each(f func(temperature, value float64) error) error {
+func (t Table) each(f func(temperature, value float64) error) error {
 	if t.temperature == nil {
 		return f(0, t.constant)
 	}

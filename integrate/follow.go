@@ -1,0 +1,334 @@
+package integrate
+
+import "math"
+
+// Tolerance is the local error allowed to one step of Follow. Both the stress and the creep strain keep it.
+type Tolerance struct {
+	// Relative is the error of one step over the von Mises stress, and over the equivalent creep strain. Above 0, at most 0.1.
+	Relative float64
+
+	// Stress is an absolute floor [stress], >= 0: below it the von Mises stress is not resolved relatively. Without one (0) a
+	// thousandth of the largest von Mises stress met in the increment serves.
+	Stress float64
+
+	// Creep is an absolute floor [-], >= 0, for the creep strain, which is virgin at 0. Without one (0) the elastic strain of
+	// the largest von Mises stress met serves: creep strain then counts as soon as it matters to the stress.
+	Creep float64
+}
+
+// Course says how an increment was followed.
+type Course struct {
+	Steps, Rejected int     // accepted and rejected steps of the higher-order method
+	Solves          int     // scalar problems solved, five per step
+	Iterations      int     // corrections in all of them
+	Dt              float64 // the length the next step would have had: where to start the next increment, see Follow
+	Error           float64 // the largest estimated error of an accepted step, over what the tolerance allows
+}
+
+// Follow carries the material along the linear path of strain and temperature from start to inc with as many steps as the
+// tolerance asks for, and writes the state at its end, the stress, and the exact derivatives of that stress by the end strain
+// and end temperature, for the steps that were taken: what Step does with one backward-Euler step, of fourth order and with a
+// known error. A host's global Newton stays quadratic on the tangent, up to the choice of steps, which changes with the
+// strain: near convergence it no longer does.
+//
+// first is the length of the first step to try [time]; 0 lets Follow choose. Course.Dt of the increment before is a good one.
+// Hardening from zero strain starts by itself, with steps graded from the time at which creep first matters.
+//
+// It allocates nothing. The error is BadIncrement for a tolerance or start that is not a number to work with, else a Code of
+// Step; a rupture within the increment is BeyondRupture. Then out and the course are untouched and zero, and old is as it was;
+// old may be &out.State.
+func (m *Material) Follow(out *Result, old *State, start Conditions, inc Increment, tolerance Tolerance, first float64) (
+	Course, error) {
+	if !tolerance.valid() || !(first >= 0) || !finite(first) || !start.valid() {
+		return Course{}, BadIncrement
+	}
+	if !inc.valid() {
+		return Course{}, BadIncrement
+	}
+	if inc.Dt == 0 {
+		if code := m.step(out, old, &inc); code != 0 {
+			return Course{}, code
+		}
+		return Course{Dt: first}, nil
+	}
+	f := follower{material: m, tolerance: tolerance, path: path{start, Conditions{inc.Strain, inc.Temperature}, inc.Dt},
+		state: *old, next: first, withSlopes: true}
+	if code := f.begin(); code != 0 {
+		return Course{}, code
+	}
+	for f.time < inc.Dt {
+		if code := f.advance(); code != 0 {
+			return Course{}, code
+		}
+	}
+	f.course.Dt = f.next
+	f.write(out, old.Equivalent)
+	return f.course, nil
+}
+
+func (t Tolerance) valid() bool {
+	return t.Relative > 0 && t.Relative <= 0.1 && t.Stress >= 0 && t.Creep >= 0 && finite(t.Stress+t.Creep)
+}
+
+func (c *Conditions) valid() bool {
+	return c.Temperature > 0 && finite(c.Temperature) && c.Strain.IsFinite()
+}
+
+// path is strain and temperature linear in time.
+type path struct {
+	from, to Conditions
+	length   float64
+}
+
+// at returns the conditions at a time and the part of the way done.
+func (p *path) at(time float64) (c Conditions, part float64) {
+	part = time / p.length
+	if part >= 1 {
+		return p.to, 1
+	}
+	for i := range c.Strain {
+		c.Strain[i] = p.from.Strain[i] + part*(p.to.Strain[i]-p.from.Strain[i])
+	}
+	c.Temperature = p.from.Temperature + part*(p.to.Temperature-p.from.Temperature)
+	return c, part
+}
+
+// follower is a walk along a path.
+type follower struct {
+	material   *Material
+	tolerance  Tolerance
+	path       path
+	state      State
+	time       float64 // from the start of the path
+	next       float64 // length of the step to try next
+	largest    float64 // von Mises stress met
+	mises      float64 // at the present time
+	first      rates   // at the present time
+	withSlopes bool
+	slopes     slopes // of state and first by the end of the path
+	firstSlope slopes
+	last       stage // of the last accepted step
+	course     Course
+}
+
+// A step is given up when it is shorter than this part of the time behind it, or was cut this often in a row.
+const (
+	least    = 1e-13
+	mostCuts = 40
+)
+
+// begin finds the rates at the start, and a first step if none was given. Where the first rate is infinite it takes a
+// backward-Euler step so short that its creep strain does not matter, from which the others grow.
+func (f *follower) begin() Code {
+	var code Code
+	f.mises, code = f.material.ratesAt(&f.first, &f.state, &f.path.from)
+	if code != 0 {
+		return code
+	}
+	f.largest = math.Max(f.mises, f.tolerance.Stress)
+	if !finite(f.first.equivalent) {
+		return f.beginSingular()
+	}
+	if f.next == 0 {
+		f.next = f.firstLength()
+	}
+	return 0
+}
+
+// firstLength is the time to creep away a part of the stress that a fourth-order step could resolve.
+func (f *follower) firstLength() float64 {
+	moduli := f.material.moduliAt(f.path.from.Temperature)
+	relaxation := 3 * moduli.shear * f.first.equivalent / f.mises // 1/time
+	if !(relaxation > 0) {
+		return f.path.length / 8
+	}
+	return math.Min(f.path.length, 0.3*math.Sqrt(math.Sqrt(f.tolerance.Relative))/relaxation)
+}
+
+func (f *follower) beginSingular() Code {
+	conditions := f.path.from
+	moduli := f.material.moduliAt(conditions.Temperature)
+	const slight = 1e-2 // part of the tolerated creep strain that the first step may make
+	creep := slight * f.tolerance.Relative * math.Max(f.mises/(3*moduli.shear), f.tolerance.Creep)
+	probe := f.state
+	probe.Equivalent += creep
+	var r rates
+	if _, code := f.material.ratesAt(&r, &probe, &conditions); code != 0 {
+		return code
+	}
+	dt := math.Min(creep/r.equivalent, f.path.length)
+	if !(dt > 0) {
+		return LawUndefined
+	}
+	to, part := f.path.at(dt)
+	inc := Increment{Dt: dt, Strain: to.Strain, Temperature: to.Temperature}
+	if code := f.last.solve(f.material, &f.state, &inc, f.withSlopes); code != 0 {
+		return code
+	}
+	f.last.rates(&f.first, &f.state, dt, f.material.memory.count)
+	if f.withSlopes {
+		f.firstSlope.through(&f.last, &slopes{}, part, dt, f.material.memory.count)
+		f.slopes.add(dt, &f.firstSlope)
+	}
+	f.state.add(dt, &f.first)
+	f.time, f.mises = dt, f.last.mises()
+	f.course.Solves++
+	f.next = dt
+	return 0
+}
+
+// advance takes one step, after as many rejections as it needs.
+func (f *follower) advance() Code {
+	code := BeyondRupture
+	for range mostCuts {
+		h := f.path.length - f.time
+		if f.next < 0.999*h { // no crumb for the end
+			h = f.next
+		}
+		if !(h > least*f.time) {
+			return code
+		}
+		var s step
+		var worst float64
+		if code = f.try(&s, h); code == 0 {
+			worst = f.judge(&s, h)
+		}
+		switch {
+		case code != 0 && !Recoverable(code) && code != BadState:
+			return code
+		case code != 0 || math.IsNaN(worst):
+			f.next = h / 4
+		default:
+			f.next = h * math.Max(0.15, math.Min(6, 0.85*math.Pow(worst, -1.0/order)))
+		}
+		if code == 0 && worst <= 1 {
+			f.accept(&s, h, worst)
+			return 0
+		}
+		f.course.Rejected++
+		if code == 0 {
+			code = NoConvergence
+		}
+	}
+	return code
+}
+
+// step is a step being tried.
+type step struct {
+	rates  [stages]rates
+	slopes [stages]slopes
+	last   stage
+	end    State
+}
+
+// try runs the stages of a step of length h.
+func (f *follower) try(s *step, h float64) Code {
+	count := f.material.memory.count
+	s.rates[0] = f.first
+	s.slopes[0] = f.firstSlope
+	for i := 1; i < stages; i++ {
+		y, dt := f.state, diagonal*h
+		for j, w := range weights[i][:i] {
+			if w != 0 {
+				y.add(h*w, &s.rates[j])
+			}
+		}
+		if y.Equivalent < 0 { // by rounding, or by the weights at a singular start, where the error shows it
+			y.Equivalent = 0
+		}
+		to, part := f.path.at(f.time + abscissae[i]*h)
+		inc := Increment{Dt: dt, Strain: to.Strain, Temperature: to.Temperature}
+		if i == stages-1 && f.time+h >= f.path.length {
+			inc.Strain, inc.Temperature, part = f.path.to.Strain, f.path.to.Temperature, 1
+		}
+		if code := s.last.solve(f.material, &y, &inc, f.withSlopes); code != 0 {
+			return code
+		}
+		f.course.Solves++
+		f.course.Iterations += s.last.iterations
+		s.last.rates(&s.rates[i], &y, dt, count)
+		if f.withSlopes {
+			from := f.slopes
+			for j, w := range weights[i][:i] {
+				if w != 0 {
+					from.add(h*w, &s.slopes[j])
+				}
+			}
+			s.slopes[i].through(&s.last, &from, part, dt, count)
+		}
+		if i == stages-1 {
+			s.end = y
+			s.end.add(dt, &s.rates[i])
+		}
+	}
+	return 0
+}
+
+// judge returns the estimated error of a step over what the tolerance allows.
+func (f *follower) judge(s *step, h float64) float64 {
+	var e rates
+	for i := range stages {
+		w := h * (weights[stages-1][i] - embedded[i])
+		for c := range e.creep {
+			e.creep[c] += w * s.rates[i].creep[c]
+		}
+		e.equivalent += w * s.rates[i].equivalent
+		for v := range e.internal {
+			e.internal[v] += w * s.rates[i].internal[v]
+		}
+	}
+	mises := s.last.mises()
+	largest := math.Max(f.largest, mises)
+	stressFloor, creepFloor := f.tolerance.Stress, f.tolerance.Creep
+	if stressFloor == 0 {
+		stressFloor = 1e-3 * largest
+	}
+	if creepFloor == 0 {
+		creepFloor = largest / (3 * s.last.shear)
+	}
+	relative := f.tolerance.Relative
+	stress := 3 * s.last.shear * e.creep.EquivalentStrain() / (relative * math.Max(stressFloor, math.Max(mises, f.mises)))
+	creep := math.Max(math.Abs(e.equivalent), e.creep.EquivalentStrain()) /
+		(relative * math.Max(creepFloor, s.end.Equivalent))
+	worst := math.Max(stress, creep)
+	for v := range f.material.memory.count {
+		const floor = 0.1 // of the variable's unit: the way to its limit, or its initial value
+		scale := math.Max(math.Abs(s.end.Internal[v]), floor*f.material.memory.unit[v])
+		worst = math.Max(worst, math.Abs(e.internal[v])/(relative*scale))
+	}
+	return worst
+}
+
+func (f *follower) accept(s *step, h, worst float64) {
+	f.course.Steps++
+	f.course.Error = math.Max(f.course.Error, worst)
+	f.time += h
+	if f.path.length-f.time <= 4*epsilon*f.path.length {
+		f.time = f.path.length
+	}
+	f.state, f.first, f.last = s.end, s.rates[stages-1], s.last
+	f.mises = s.last.mises()
+	f.largest = math.Max(f.largest, f.mises)
+	if f.withSlopes {
+		for i, w := range weights[stages-1] {
+			if w != 0 {
+				f.slopes.add(h*w, &s.slopes[i])
+			}
+		}
+		f.firstSlope = s.slopes[stages-1]
+	}
+}
+
+// write fills the result at the end of the path.
+func (f *follower) write(out *Result, old float64) {
+	s := &f.last
+	keep := 2 * s.shear * (1 - s.fraction)
+	out.Stress = s.deviator.Scale(keep)
+	addMean(&out.Stress, s.bulk*s.volumetric)
+	out.CreepStep = f.state.Equivalent - old
+	out.State = f.state
+	out.Iterations, out.Residual = f.course.Iterations, 0
+	if f.withSlopes {
+		f.slopes.tangent(out, s)
+	}
+}
