@@ -52,13 +52,17 @@ type rates struct {
 	internal   [variables]float64
 }
 
-// add adds h·f to a state.
-func (s *State) add(h float64, f *rates) {
-	for i := range s.Creep {
-		s.Creep[i] += h * f.creep[i]
-	}
+// add adds h·f to a state with the given number of internal variables.
+func (s *State) add(h float64, f *rates, count int) {
+	c := &s.Creep
+	c[0] += h * f.creep[0]
+	c[1] += h * f.creep[1]
+	c[2] += h * f.creep[2]
+	c[3] += h * f.creep[3]
+	c[4] += h * f.creep[4]
+	c[5] += h * f.creep[5]
 	s.Equivalent += h * f.equivalent
-	for i := range s.Internal {
+	for i := range count {
 		s.Internal[i] += h * f.internal[i]
 	}
 }

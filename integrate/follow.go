@@ -1,6 +1,10 @@
 package integrate
 
-import "math"
+import (
+	"math"
+
+	"example.com/holdtime/tensor"
+)
 
 // Tolerance is the local error allowed to one step of Follow. Both the stress and the creep strain keep it.
 type Tolerance struct {
@@ -39,11 +43,11 @@ type Course struct {
 // old may be &out.State.
 func (m *Material) Follow(out *Result, old *State, start Conditions, inc Increment, tolerance Tolerance, first float64) (
 	Course, error) {
-	if !tolerance.valid() || !(first >= 0) || !finite(first) || !start.valid() {
+	if !tolerance.valid() || !(first >= 0) || !finite(first) || !start.valid() || !inc.valid() {
 		return Course{}, BadIncrement
 	}
-	if !inc.valid() {
-		return Course{}, BadIncrement
+	if !old.valid() {
+		return Course{}, BadState
 	}
 	if inc.Dt == 0 {
 		if code := m.step(out, old, &inc); code != 0 {
@@ -51,19 +55,43 @@ func (m *Material) Follow(out *Result, old *State, start Conditions, inc Increme
 		}
 		return Course{Dt: first}, nil
 	}
-	f := follower{material: m, tolerance: tolerance, path: path{start, Conditions{inc.Strain, inc.Temperature}, inc.Dt},
-		state: *old, next: first, withSlopes: true}
-	if code := f.begin(); code != 0 {
+	f := m.walk(old, start, &inc, tolerance, first)
+	f.differentiates = true
+	if code := f.run(); code != 0 {
 		return Course{}, code
 	}
-	for f.time < inc.Dt {
-		if code := f.advance(); code != 0 {
-			return Course{}, code
-		}
-	}
-	f.course.Dt = f.next
-	f.write(out, old.Equivalent)
+	out.Stress = f.stress()
+	out.CreepStep = f.state.Equivalent - old.Equivalent
+	out.State = f.state
+	out.Iterations, out.Residual = f.course.Iterations, 0
+	f.derivatives.state.tangent(out, &f.last)
 	return f.course, nil
+}
+
+// FollowStress is Follow without the derivatives, at less than half the cost: it writes the stress and the state at the end,
+// the same as Follow's to the bit. end may be old.
+func (m *Material) FollowStress(stress *tensor.Sym, end, old *State, start Conditions, inc Increment, tolerance Tolerance,
+	first float64) (Course, error) {
+	if !tolerance.valid() || !(first >= 0) || !finite(first) || !start.valid() || !inc.valid() {
+		return Course{}, BadIncrement
+	}
+	if !old.valid() {
+		return Course{}, BadState
+	}
+	if inc.Dt == 0 {
+		return Course{Dt: first}, m.Stress(stress, end, old, inc)
+	}
+	f := m.walk(old, start, &inc, tolerance, first)
+	if code := f.run(); code != 0 {
+		return Course{}, code
+	}
+	*stress, *end = f.stress(), f.state
+	return f.course, nil
+}
+
+func (m *Material) walk(old *State, start Conditions, inc *Increment, tolerance Tolerance, first float64) follower {
+	end := Conditions{inc.Strain, inc.Temperature}
+	return follower{material: m, tolerance: tolerance, path: path{start, end, inc.Dt, start == end}, state: *old, next: first}
 }
 
 func (t Tolerance) valid() bool {
@@ -78,13 +106,14 @@ func (c *Conditions) valid() bool {
 type path struct {
 	from, to Conditions
 	length   float64
+	held     bool // from and to are the same
 }
 
 // at returns the conditions at a time and the part of the way done.
 func (p *path) at(time float64) (c Conditions, part float64) {
 	part = time / p.length
-	if part >= 1 {
-		return p.to, 1
+	if p.held || part >= 1 {
+		return p.to, math.Min(part, 1)
 	}
 	for i := range c.Strain {
 		c.Strain[i] = p.from.Strain[i] + part*(p.to.Strain[i]-p.from.Strain[i])
@@ -95,20 +124,47 @@ func (p *path) at(time float64) (c Conditions, part float64) {
 
 // follower is a walk along a path.
 type follower struct {
-	material   *Material
-	tolerance  Tolerance
-	path       path
-	state      State
-	time       float64 // from the start of the path
-	next       float64 // length of the step to try next
-	largest    float64 // von Mises stress met
-	mises      float64 // at the present time
-	first      rates   // at the present time
-	withSlopes bool
-	slopes     slopes // of state and first by the end of the path
-	firstSlope slopes
-	last       stage // of the last accepted step
-	course     Course
+	material    *Material
+	tolerance   Tolerance
+	path        path
+	state       State
+	time        float64       // from the start of the path
+	next        float64       // length of the step to try next
+	largest     float64       // von Mises stress met
+	mises       float64       // at the present time
+	rates       [stages]rates // the first is that at the present time; the others of the step being tried
+	tried, last stage         // of the step being tried, and of the last accepted one
+	end         State         // of the step being tried
+	course      Course
+
+	differentiates bool
+	derivatives    walkSlopes
+}
+
+// walkSlopes are the derivatives of a walk by the end of its path.
+type walkSlopes struct {
+	state slopes
+	stage [stages]slopes // of the rates
+}
+
+// run walks to the end of the path.
+func (f *follower) run() Code {
+	if code := f.begin(); code != 0 {
+		return code
+	}
+	for f.time < f.path.length {
+		if code := f.advance(); code != 0 {
+			return code
+		}
+	}
+	f.course.Dt = f.next
+	return 0
+}
+
+func (f *follower) stress() tensor.Sym {
+	s := f.last.deviator.Scale(2 * f.last.shear * (1 - f.last.fraction))
+	addMean(&s, f.last.bulk*f.last.volumetric)
+	return s
 }
 
 // A step is given up when it is shorter than this part of the time behind it, or was cut this often in a row.
@@ -121,12 +177,12 @@ const (
 // backward-Euler step so short that its creep strain does not matter, from which the others grow.
 func (f *follower) begin() Code {
 	var code Code
-	f.mises, code = f.material.ratesAt(&f.first, &f.state, &f.path.from)
+	f.mises, code = f.material.ratesAt(&f.rates[0], &f.state, &f.path.from)
 	if code != 0 {
 		return code
 	}
 	f.largest = math.Max(f.mises, f.tolerance.Stress)
-	if !finite(f.first.equivalent) {
+	if !finite(f.rates[0].equivalent) {
 		return f.beginSingular()
 	}
 	if f.next == 0 {
@@ -138,7 +194,7 @@ func (f *follower) begin() Code {
 // firstLength is the time to creep away a part of the stress that a fourth-order step could resolve.
 func (f *follower) firstLength() float64 {
 	moduli := f.material.moduliAt(f.path.from.Temperature)
-	relaxation := 3 * moduli.shear * f.first.equivalent / f.mises // 1/time
+	relaxation := 3 * moduli.shear * f.rates[0].equivalent / f.mises // 1/time
 	if !(relaxation > 0) {
 		return f.path.length / 8
 	}
@@ -162,15 +218,15 @@ func (f *follower) beginSingular() Code {
 	}
 	to, part := f.path.at(dt)
 	inc := Increment{Dt: dt, Strain: to.Strain, Temperature: to.Temperature}
-	if code := f.last.solve(f.material, &f.state, &inc, f.withSlopes); code != 0 {
+	if code := f.last.solve(f.material, &f.state, &inc, f.differentiates); code != 0 {
 		return code
 	}
-	f.last.rates(&f.first, &f.state, dt, f.material.memory.count)
-	if f.withSlopes {
-		f.firstSlope.through(&f.last, &slopes{}, part, dt, f.material.memory.count)
-		f.slopes.add(dt, &f.firstSlope)
+	f.last.rates(&f.rates[0], &f.state, dt, f.material.memory.count)
+	if d := &f.derivatives; f.differentiates {
+		d.stage[0].through(&f.last, &slopes{}, part, dt, f.material.memory.count)
+		d.state.add(dt, &d.stage[0])
 	}
-	f.state.add(dt, &f.first)
+	f.state.add(dt, &f.rates[0], f.material.memory.count)
 	f.time, f.mises = dt, f.last.mises()
 	f.course.Solves++
 	f.next = dt
@@ -188,10 +244,9 @@ func (f *follower) advance() Code {
 		if !(h > least*f.time) {
 			return code
 		}
-		var s step
 		var worst float64
-		if code = f.try(&s, h); code == 0 {
-			worst = f.judge(&s, h)
+		if code = f.try(h); code == 0 {
+			worst = f.judge(h)
 		}
 		switch {
 		case code != 0 && !Recoverable(code) && code != BadState:
@@ -202,7 +257,7 @@ func (f *follower) advance() Code {
 			f.next = h * math.Max(0.15, math.Min(6, 0.85*math.Pow(worst, -1.0/order)))
 		}
 		if code == 0 && worst <= 1 {
-			f.accept(&s, h, worst)
+			f.accept(h, worst)
 			return 0
 		}
 		f.course.Rejected++
@@ -213,122 +268,105 @@ func (f *follower) advance() Code {
 	return code
 }
 
-// step is a step being tried.
-type step struct {
-	rates  [stages]rates
-	slopes [stages]slopes
-	last   stage
-	end    State
-}
-
 // try runs the stages of a step of length h.
-func (f *follower) try(s *step, h float64) Code {
-	count := f.material.memory.count
-	s.rates[0] = f.first
-	s.slopes[0] = f.firstSlope
+func (f *follower) try(h float64) Code {
+	count, dt := f.material.memory.count, diagonal*h
 	for i := 1; i < stages; i++ {
-		y, dt := f.state, diagonal*h
+		y := f.state
 		for j, w := range weights[i][:i] {
 			if w != 0 {
-				y.add(h*w, &s.rates[j])
+				y.add(h*w, &f.rates[j], count)
 			}
 		}
 		if y.Equivalent < 0 { // by rounding, or by the weights at a singular start, where the error shows it
 			y.Equivalent = 0
 		}
 		to, part := f.path.at(f.time + abscissae[i]*h)
-		inc := Increment{Dt: dt, Strain: to.Strain, Temperature: to.Temperature}
 		if i == stages-1 && f.time+h >= f.path.length {
-			inc.Strain, inc.Temperature, part = f.path.to.Strain, f.path.to.Temperature, 1
+			to, part = f.path.to, 1
 		}
-		if code := s.last.solve(f.material, &y, &inc, f.withSlopes); code != 0 {
+		inc := Increment{Dt: dt, Strain: to.Strain, Temperature: to.Temperature}
+		if code := f.tried.solve(f.material, &y, &inc, f.differentiates); code != 0 {
 			return code
 		}
 		f.course.Solves++
-		f.course.Iterations += s.last.iterations
-		s.last.rates(&s.rates[i], &y, dt, count)
-		if f.withSlopes {
-			from := f.slopes
-			for j, w := range weights[i][:i] {
-				if w != 0 {
-					from.add(h*w, &s.slopes[j])
-				}
-			}
-			s.slopes[i].through(&s.last, &from, part, dt, count)
+		f.course.Iterations += f.tried.iterations
+		f.tried.rates(&f.rates[i], &y, dt, count)
+		if f.differentiates {
+			f.differentiate(i, h, part)
 		}
 		if i == stages-1 {
-			s.end = y
-			s.end.add(dt, &s.rates[i])
+			f.end = y
+			f.end.add(dt, &f.rates[i], count)
 		}
 	}
 	return 0
 }
 
-// judge returns the estimated error of a step over what the tolerance allows.
-func (f *follower) judge(s *step, h float64) float64 {
+// differentiate carries the derivatives through stage i.
+func (f *follower) differentiate(i int, h, part float64) {
+	d := &f.derivatives
+	from := d.state
+	for j, w := range weights[i][:i] {
+		if w != 0 {
+			from.add(h*w, &d.stage[j])
+		}
+	}
+	d.stage[i].through(&f.tried, &from, part, diagonal*h, f.material.memory.count)
+}
+
+// judge returns the estimated error of the step just tried over what the tolerance allows.
+func (f *follower) judge(h float64) float64 {
 	var e rates
+	count := f.material.memory.count
 	for i := range stages {
 		w := h * (weights[stages-1][i] - embedded[i])
 		for c := range e.creep {
-			e.creep[c] += w * s.rates[i].creep[c]
+			e.creep[c] += w * f.rates[i].creep[c]
 		}
-		e.equivalent += w * s.rates[i].equivalent
-		for v := range e.internal {
-			e.internal[v] += w * s.rates[i].internal[v]
+		e.equivalent += w * f.rates[i].equivalent
+		for v := range count {
+			e.internal[v] += w * f.rates[i].internal[v]
 		}
 	}
-	mises := s.last.mises()
+	mises := f.tried.mises()
 	largest := math.Max(f.largest, mises)
 	stressFloor, creepFloor := f.tolerance.Stress, f.tolerance.Creep
 	if stressFloor == 0 {
 		stressFloor = 1e-3 * largest
 	}
 	if creepFloor == 0 {
-		creepFloor = largest / (3 * s.last.shear)
+		creepFloor = largest / (3 * f.tried.shear)
 	}
 	relative := f.tolerance.Relative
-	stress := 3 * s.last.shear * e.creep.EquivalentStrain() / (relative * math.Max(stressFloor, math.Max(mises, f.mises)))
-	creep := math.Max(math.Abs(e.equivalent), e.creep.EquivalentStrain()) /
-		(relative * math.Max(creepFloor, s.end.Equivalent))
+	equivalent := e.creep.EquivalentStrain()
+	stress := 3 * f.tried.shear * equivalent / (relative * math.Max(stressFloor, math.Max(mises, f.mises)))
+	creep := math.Max(math.Abs(e.equivalent), equivalent) / (relative * math.Max(creepFloor, f.end.Equivalent))
 	worst := math.Max(stress, creep)
-	for v := range f.material.memory.count {
+	for v := range count {
 		const floor = 0.1 // of the variable's unit: the way to its limit, or its initial value
-		scale := math.Max(math.Abs(s.end.Internal[v]), floor*f.material.memory.unit[v])
+		scale := math.Max(math.Abs(f.end.Internal[v]), floor*f.material.memory.unit[v])
 		worst = math.Max(worst, math.Abs(e.internal[v])/(relative*scale))
 	}
 	return worst
 }
 
-func (f *follower) accept(s *step, h, worst float64) {
+func (f *follower) accept(h, worst float64) {
 	f.course.Steps++
 	f.course.Error = math.Max(f.course.Error, worst)
 	f.time += h
 	if f.path.length-f.time <= 4*epsilon*f.path.length {
 		f.time = f.path.length
 	}
-	f.state, f.first, f.last = s.end, s.rates[stages-1], s.last
-	f.mises = s.last.mises()
+	f.state, f.rates[0], f.last = f.end, f.rates[stages-1], f.tried
+	f.mises = f.tried.mises()
 	f.largest = math.Max(f.largest, f.mises)
-	if f.withSlopes {
+	if d := &f.derivatives; f.differentiates {
 		for i, w := range weights[stages-1] {
 			if w != 0 {
-				f.slopes.add(h*w, &s.slopes[i])
+				d.state.add(h*w, &d.stage[i])
 			}
 		}
-		f.firstSlope = s.slopes[stages-1]
-	}
-}
-
-// write fills the result at the end of the path.
-func (f *follower) write(out *Result, old float64) {
-	s := &f.last
-	keep := 2 * s.shear * (1 - s.fraction)
-	out.Stress = s.deviator.Scale(keep)
-	addMean(&out.Stress, s.bulk*s.volumetric)
-	out.CreepStep = f.state.Equivalent - old
-	out.State = f.state
-	out.Iterations, out.Residual = f.course.Iterations, 0
-	if f.withSlopes {
-		f.slopes.tangent(out, s)
+		d.stage[0] = d.stage[stages-1]
 	}
 }

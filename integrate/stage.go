@@ -41,8 +41,7 @@ func (s *stage) mises() float64 { return 3 * s.shear * s.equivalent * (1 - s.fra
 
 // solve takes the backward-Euler step dt from start to the strain and temperature given, and with slopes also its derivatives.
 func (s *stage) solve(m *Material, start *State, inc *Increment, slopes bool) Code {
-	var ok bool
-	if s.trial, ok = m.trialState(start, inc); !ok || !(start.Equivalent >= 0) {
+	if ok := s.trial.set(m, start, inc); !ok || !(start.Equivalent >= 0) {
 		return refusal(start, inc)
 	}
 	if m.memory.law != nil {
@@ -117,18 +116,26 @@ func (s *stage) slopesInternal(m *Material, c *coupled, x *node) {
 		answers = [5 + variables]answer{}
 	}
 	unit := &m.memory.unit
-	pick := func(of func(*answer) float64, scale float64) (d datum) {
-		d = datum{logTrial: scale * of(&answers[0]), temperature: scale * of(&answers[1]), strain: scale * of(&answers[2]),
-			mean: scale * of(&answers[3]), principal: scale * of(&answers[4])}
-		for j := range c.count {
-			d.internal[j] = scale * of(&answers[5+j]) / unit[j]
-		}
-		return d
+	var z, v [5 + variables]float64
+	for k := range n {
+		z[k] = answers[k].z
 	}
-	s.slope.z = pick(func(a *answer) float64 { return a.z }, 1)
+	s.slope.z = datumOf(&z, unit, c.count)
 	for i := range c.count {
-		s.slope.internal[i] = pick(func(a *answer) float64 { return a.v[i] }, unit[i])
+		for k := range n {
+			v[k] = answers[k].v[i] * unit[i]
+		}
+		s.slope.internal[i] = datumOf(&v, unit, c.count)
 	}
+}
+
+// datumOf sorts derivatives from the order of the nudges into a datum.
+func datumOf(d *[5 + variables]float64, unit *[variables]float64, count int) datum {
+	sorted := datum{logTrial: d[0], temperature: d[1], strain: d[2], mean: d[3], principal: d[4]}
+	for j := range count {
+		sorted.internal[j] = d[5+j] / unit[j]
+	}
+	return sorted
 }
 
 // rates writes the time derivatives the stage stands for, from a start state and dt.
