@@ -3,6 +3,7 @@ package integrate
 import (
 	"math"
 
+	"example.com/holdtime/integrate/internal/dirk"
 	"example.com/holdtime/tensor"
 )
 
@@ -273,7 +274,7 @@ func (f *follower) try(h float64) Code {
 	count, dt := f.material.memory.count, diagonal*h
 	for i := 1; i < stages; i++ {
 		y := f.state
-		for j, w := range weights[i][:i] {
+		for j, w := range dirk.Weights[i][:i] {
 			if w != 0 {
 				y.add(h*w, &f.rates[j], count)
 			}
@@ -281,7 +282,7 @@ func (f *follower) try(h float64) Code {
 		if y.Equivalent < 0 { // by rounding, or by the weights at a singular start, where the error shows it
 			y.Equivalent = 0
 		}
-		to, part := f.path.at(f.time + abscissae[i]*h)
+		to, part := f.path.at(f.time + dirk.Abscissae[i]*h)
 		if i == stages-1 && f.time+h >= f.path.length {
 			to, part = f.path.to, 1
 		}
@@ -307,7 +308,7 @@ func (f *follower) try(h float64) Code {
 func (f *follower) differentiate(i int, h, part float64) {
 	d := &f.derivatives
 	from := d.state
-	for j, w := range weights[i][:i] {
+	for j, w := range dirk.Weights[i][:i] {
 		if w != 0 {
 			from.add(h*w, &d.stage[j])
 		}
@@ -320,7 +321,7 @@ func (f *follower) judge(h float64) float64 {
 	var e rates
 	count := f.material.memory.count
 	for i := range stages {
-		w := h * (weights[stages-1][i] - embedded[i])
+		w := h * (dirk.Weights[stages-1][i] - dirk.Embedded[i])
 		for c := range e.creep {
 			e.creep[c] += w * f.rates[i].creep[c]
 		}
@@ -362,7 +363,7 @@ func (f *follower) accept(h, worst float64) {
 	f.mises = f.tried.mises()
 	f.largest = math.Max(f.largest, f.mises)
 	if d := &f.derivatives; f.differentiates {
-		for i, w := range weights[stages-1] {
+		for i, w := range dirk.Weights[stages-1] {
 			if w != 0 {
 				d.state.add(h*w, &d.stage[i])
 			}

@@ -1,11 +1,5 @@
-package integrate
-
-import (
-	"example.com/holdtime/creeplaw"
-	"example.com/holdtime/tensor"
-)
-
-// The higher-order method under Follow is an implicit Runge–Kutta method whose stages are each a backward-Euler step: stage i
+// Package dirk holds the coefficients of the higher-order method under integrate.Material.Follow and package program: an
+// implicit Runge–Kutta method whose stages are each a backward-Euler step: stage i
 // starts from the state y + H Σ_{j<i} a_ij f_j and takes the step a_ii H. So a stage is the public step, with its safe solve,
 // and nothing else has to be solved.
 //
@@ -17,16 +11,17 @@ import (
 // Source: C. A. Kennedy, M. H. Carpenter, Additive Runge–Kutta schemes for convection–diffusion–reaction equations, Appl.
 // Numer. Math. 44 (2003) 139–181, the implicit part of the method of order 4(3) with six stages. The coefficients are from
 // memory; a test holds them to the order conditions in rational arithmetic, which determine that they are right.
+package dirk
 
+// Shape of the method.
 const (
-	stages = 6
-	order  = 4 // of the result; the embedded one is of order 3
-
-	variables = creeplaw.MaxVariables
+	Stages   = 6
+	Order    = 4       // of the result; the embedded one is of order 3
+	Diagonal = 1.0 / 4 // a_ii of every implicit stage
 )
 
-// weights are the coefficients a_ij; the last row is also the result's.
-var weights = [stages][stages]float64{
+// Weights are the coefficients a_ij; the last row is also the result's.
+var Weights = [Stages][Stages]float64{
 	{},
 	{1.0 / 4, 1.0 / 4},
 	{8611.0 / 62500, -1743.0 / 31250, 1.0 / 4},
@@ -35,34 +30,9 @@ var weights = [stages][stages]float64{
 	{82889.0 / 524892, 0, 15625.0 / 83664, 69875.0 / 102672, -2260.0 / 8211, 1.0 / 4},
 }
 
-// embedded are the weights of the third-order result.
-var embedded = [stages]float64{4586570599.0 / 29645900160, 0, 178811875.0 / 945068544, 814220225.0 / 1159782912,
+// Embedded are the weights of the third-order result.
+var Embedded = [Stages]float64{4586570599.0 / 29645900160, 0, 178811875.0 / 945068544, 814220225.0 / 1159782912,
 	-3700637.0 / 11593932, 61727.0 / 225920}
 
-// abscissae are the times of the stages in units of the step.
-var abscissae = [stages]float64{0, 1.0 / 2, 83.0 / 250, 31.0 / 50, 17.0 / 20, 1}
-
-// diagonal is a_ii of every implicit stage.
-const diagonal = 1.0 / 4
-
-// rates are the time derivatives of a state.
-type rates struct {
-	creep      tensor.Sym
-	equivalent float64
-	internal   [variables]float64
-}
-
-// add adds h·f to a state with the given number of internal variables.
-func (s *State) add(h float64, f *rates, count int) {
-	c := &s.Creep
-	c[0] += h * f.creep[0]
-	c[1] += h * f.creep[1]
-	c[2] += h * f.creep[2]
-	c[3] += h * f.creep[3]
-	c[4] += h * f.creep[4]
-	c[5] += h * f.creep[5]
-	s.Equivalent += h * f.equivalent
-	for i := range count {
-		s.Internal[i] += h * f.internal[i]
-	}
-}
+// Abscissae are the times of the stages in units of the step.
+var Abscissae = [Stages]float64{0, 1.0 / 2, 83.0 / 250, 31.0 / 50, 17.0 / 20, 1}

@@ -1,4 +1,4 @@
-package integrate
+package dirk
 
 import (
 	"math/big"
@@ -11,7 +11,7 @@ import (
 
 // The coefficients of dirk.go again, as exact fractions: Kennedy & Carpenter 2003, from memory.
 var (
-	exactWeights = [stages][]string{
+	exactWeights = [Stages][]string{
 		{"0"},
 		{"1/4", "1/4"},
 		{"8611/62500", "-1743/31250", "1/4"},
@@ -26,7 +26,7 @@ var (
 type vector []*big.Rat
 
 func vectorOf(texts []string) vector {
-	v := make(vector, stages)
+	v := make(vector, Stages)
 	for i := range v {
 		v[i] = new(big.Rat)
 		if i < len(texts) {
@@ -47,7 +47,7 @@ func (a vector) dot(b vector) *big.Rat {
 }
 
 func (a vector) times(b vector) vector {
-	v := make(vector, stages)
+	v := make(vector, Stages)
 	for i := range v {
 		v[i] = new(big.Rat).Mul(a[i], b[i])
 	}
@@ -58,14 +58,14 @@ func (a vector) times(b vector) vector {
 // trees with up to four nodes), in exact arithmetic. They fix a fourth-order method's coefficients so tightly that a misprint
 // could not pass.
 func TestMethodMeetsItsOrderConditions(t *testing.T) {
-	var a [stages]vector
-	ones := make(vector, stages)
+	var a [Stages]vector
+	ones := make(vector, Stages)
 	for i := range a {
 		a[i] = vectorOf(exactWeights[i])
 		ones[i] = big.NewRat(1, 1)
 	}
 	times := func(v vector) vector {
-		w := make(vector, stages)
+		w := make(vector, Stages)
 		for i := range w {
 			w[i] = a[i].dot(v)
 		}
@@ -83,11 +83,11 @@ func TestMethodMeetsItsOrderConditions(t *testing.T) {
 		{c.times(c).times(c), big.NewRat(1, 4), 4}, {c.times(times(c)), big.NewRat(1, 8), 4},
 		{times(c.times(c)), big.NewRat(1, 12), 4}, {times(times(c)), big.NewRat(1, 24), 4},
 	}
-	b, lower := a[stages-1], vectorOf(exactEmbedded)
+	b, lower := a[Stages-1], vectorOf(exactEmbedded)
 	differs := false
 	for _, k := range conditions {
 		require.Zero(t, b.dot(k.v).Cmp(k.sum), "order %d", k.most)
-		if k.most < order {
+		if k.most < Order {
 			require.Zero(t, lower.dot(k.v).Cmp(k.sum), "embedded, order %d", k.most)
 		} else if lower.dot(k.v).Cmp(k.sum) != 0 {
 			differs = true
@@ -99,30 +99,30 @@ func TestMethodMeetsItsOrderConditions(t *testing.T) {
 			require.Zero(t, a[i][i].Cmp(big.NewRat(1, 4)), "the diagonal is constant")
 		}
 		want, _ := c[i].Float64()
-		check.ULP(t, "abscissa", abscissae[i], want, 0)
+		check.ULP(t, "abscissa", Abscissae[i], want, 0)
 		for j := range a[i] {
 			want, _ := a[i][j].Float64()
-			check.ULP(t, "weight", weights[i][j], want, 1)
+			check.ULP(t, "weight", Weights[i][j], want, 1)
 		}
 		want, _ = lower[i].Float64()
-		check.ULP(t, "embedded weight", embedded[i], want, 1)
+		check.ULP(t, "embedded weight", Embedded[i], want, 1)
 	}
-	require.Equal(t, diagonal, weights[1][1])
+	require.Equal(t, Diagonal, Weights[1][1])
 }
 
 // TestMethodIsLStable: on y' = λy the last stage's growth factor must vanish as λh → -∞, since a relaxed stress must stay so.
 func TestMethodIsLStable(t *testing.T) {
 	for _, z := range []float64{-1, -10, -1e3, -1e6, -1e9} {
-		var y [stages]float64
+		var y [Stages]float64
 		y[0] = 1
-		for i := 1; i < stages; i++ {
+		for i := 1; i < Stages; i++ {
 			sum := 1.0
 			for j := range i {
-				sum += z * weights[i][j] * y[j]
+				sum += z * Weights[i][j] * y[j]
 			}
-			y[i] = sum / (1 - z*weights[i][i])
+			y[i] = sum / (1 - z*Weights[i][i])
 		}
-		growth := y[stages-1]
+		growth := y[Stages-1]
 		require.LessOrEqual(t, growth*growth, 1.0, "z = %v", z)
 		if z <= -1e3 {
 			check.Abs(t, "growth factor", growth, 0, 20/-z) // the limit is approached as 1/z
