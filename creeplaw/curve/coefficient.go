@@ -62,15 +62,18 @@ func (e external) plainAt(c condition) plainValue { return plainOf(e.at(c)) }
 
 // prepare checks a coefficient on its way into a curve. Errors name the curve and the part of it.
 func prepare(curve, part string, c Coefficient) (prepared, error) {
-	switch c := c.(type) {
-	case nil:
+	if c == nil {
 		return nil, &creeplaw.MissingError{Law: curve, Part: part}
-	case own:
-		p, err := c.prepare()
-		return p, within(curve, part, err)
-	default:
-		return external{c}, nil
 	}
+	p, err := workUp(c)
+	return p, within(curve, part, err)
+}
+
+func workUp(c Coefficient) (prepared, error) {
+	if c, ok := c.(own); ok {
+		return c.prepare()
+	}
+	return external{c}, nil
 }
 
 // logAt is LogAt of a coefficient that no curve has prepared yet.

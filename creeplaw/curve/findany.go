@@ -25,7 +25,8 @@ func (h StrainHardened) findInAny(p creeplaw.Point) found {
 		case above < 0 && z.s == outermost:
 			return never()
 		case above > 0 && z.s == -outermost:
-			return pointOf(l, z.s, 0, z.evaluations)
+			return found{logTime: z.s, evaluations: z.evaluations, rate: creeplaw.LogRate{Value: l.Rate.Value,
+				ByLogStress: l.Rate.ByLogStress, ByLogTemperature: l.Rate.ByLogTemperature}}
 		}
 		above = max(-huge, min(huge, above)) // far away no step but the longest is taken anyway
 		v, m := math.Exp(above), 0.0

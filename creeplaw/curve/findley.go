@@ -41,7 +41,7 @@ func NewFindley(p FindleyParameters) (Findley, error) {
 	if err := atMostOne(curve, p.TimeExponent); err != nil {
 		return Findley{}, err
 	}
-	if err := positive("creep stress", p.CreepStress); err != nil {
+	if err := positive("stress", p.CreepStress); err != nil {
 		return Findley{}, within(curve, "creep", err)
 	}
 	s, err := newSum(curve, part{PowerOfTime(Sinh{p.Creep, 1 / p.CreepStress, 1}, p.TimeExponent), "creep", ""})

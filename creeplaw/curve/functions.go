@@ -133,10 +133,13 @@ type Activated struct {
 func (c Activated) LogAt(stress, temperature float64) LogValue { return logAt(c, stress, temperature) }
 
 func (c Activated) prepare() (prepared, error) {
-	if c.Factor == nil {
+	switch {
+	case c.Coefficient == nil:
+		return nil, &creeplaw.MissingError{Part: "coefficient"}
+	case c.Factor == nil:
 		return nil, &creeplaw.MissingError{Part: "temperature factor"}
 	}
-	within, err := prepare("", "coefficient", c.Coefficient)
+	within, err := workUp(c.Coefficient)
 	if err != nil {
 		return nil, err
 	}

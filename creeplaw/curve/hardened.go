@@ -134,6 +134,9 @@ func (h StrainHardened) find(p creeplaw.Point) found {
 // start is the plain rate at zero strain and positive stress.
 func (h StrainHardened) start(p creeplaw.Point) creeplaw.Rate {
 	e := h.curve.At(Point{Stress: p.Stress, Temperature: p.Temperature})
+	if math.IsNaN(e.Value) {
+		e = undefined()
+	}
 	r := creeplaw.Rate{Value: e.ByTime, ByStress: e.ByTimeStress, ByTemperature: e.ByTimeTemperature}
 	switch {
 	case math.IsInf(e.ByTime, 1):
@@ -157,7 +160,7 @@ func (h StrainHardened) logStart(p creeplaw.Point) creeplaw.LogRate {
 	}
 	e := h.curve.At(Point{Stress: p.Stress, Temperature: p.Temperature})
 	x := exponentsOf(Point{p.Stress, p.Temperature, 0}, e.ByTime, 0, e.ByTimeStress, e.ByTimeTemperature)
-	if !(e.ByTime >= 0) {
+	if !(e.ByTime >= 0 && e.Value >= 0) {
 		return undefinedRate()
 	}
 	return creeplaw.LogRate{Value: x.Value, ByLogStress: x.ByLogStress, ByLogTemperature: x.ByLogTemperature}

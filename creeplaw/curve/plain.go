@@ -2,26 +2,24 @@ package curve
 
 import "math"
 
-// plainAt turns the logarithms of a curve into plain numbers at positive time. Each derivative is formed inside the
-// exponential, so that it neither overflows nor vanishes before its own value does.
-func plainAt(c Logarithmic, p Point) Strain {
-	q := LogPoint{p.Stress, p.Temperature, math.Log(p.Time)}
-	l := c.LogAt(q)
-	e := Strain{
+// plain turns the logarithms of a curve at a point of positive stress and time into plain numbers. Each derivative is formed
+// inside the exponential, so that it neither overflows nor vanishes before its own value does.
+func plain(p Point, l LogStrain) Strain {
+	return Strain{
 		Value:             math.Exp(l.Strain.Value),
 		ByTime:            math.Exp(l.Rate.Value),
 		ByTimeTwice:       derivative(l.Rate.Value, l.Rate.ByLogTime, p.Time),
+		ByStress:          derivative(l.Strain.Value, l.Strain.ByLogStress, p.Stress),
 		ByTemperature:     derivative(l.Strain.Value, l.Strain.ByLogTemperature, p.Temperature),
+		ByTimeStress:      derivative(l.Rate.Value, l.Rate.ByLogStress, p.Stress),
 		ByTimeTemperature: derivative(l.Rate.Value, l.Rate.ByLogTemperature, p.Temperature),
 	}
-	if p.Stress == 0 {
-		q.Stress = faint
-		l = c.LogAt(q)
-		e.ByStress, e.ByTimeStress = slopeFrom(l.Strain), slopeFrom(l.Rate)
-		return e
-	}
-	e.ByStress = derivative(l.Strain.Value, l.Strain.ByLogStress, p.Stress)
-	e.ByTimeStress = derivative(l.Rate.Value, l.Rate.ByLogStress, p.Stress)
+}
+
+// unloaded is plain at zero stress, where the slopes by stress are taken from the curve at a faint one.
+func unloaded(p Point, l, faintly LogStrain) Strain {
+	e := plain(p, l)
+	e.ByStress, e.ByTimeStress = slopeFrom(faintly.Strain), slopeFrom(faintly.Rate)
 	return e
 }
 

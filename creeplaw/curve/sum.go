@@ -123,7 +123,13 @@ func (s sum) At(p Point) Strain {
 	case p.Time == 0:
 		return s.atStart(p)
 	}
-	return plainAt(s, p)
+	q := LogPoint{p.Stress, p.Temperature, math.Log(p.Time)}
+	l := s.LogAt(q)
+	if p.Stress == 0 {
+		q.Stress = faint
+		return unloaded(p, l, s.LogAt(q))
+	}
+	return plain(p, l)
 }
 
 // parts are the terms, for the law that freezes them.

@@ -179,7 +179,13 @@ func (c TwoRegime) At(p Point) Strain {
 	case p.Time == 0:
 		return c.first.atStart(p)
 	}
-	return plainAt(c, p)
+	q := LogPoint{p.Stress, p.Temperature, math.Log(p.Time)}
+	l := c.LogAt(q)
+	if p.Stress == 0 {
+		q.Stress = faint
+		return unloaded(p, l, c.LogAt(q))
+	}
+	return plain(p, l)
 }
 
 // logAdd is ln(eᵃ + eᵇ).
