@@ -115,7 +115,11 @@ func (o Omega) Rate(p Point) Rate {
 	if o.poly == nil && (p.Stress == 0 || p.Strain == 0) { // the limits are those of the initial rate
 		r := o.initial.Rate(p)
 		grown := math.Exp(o.omega * p.Strain)
-		return Rate{r.Value * grown, r.ByStress * grown, (r.ByStrain + o.omega*r.Value) * grown, r.ByTemperature * grown}
+		byStrain := r.ByStrain
+		if finite(r.Value) {
+			byStrain += o.omega * r.Value
+		}
+		return Rate{scale(r.Value, grown), scale(r.ByStress, grown), scale(byStrain, grown), scale(r.ByTemperature, grown)}
 	}
 	l := o.LogRate(p)
 	if p.Stress == 0 && !math.IsNaN(l.Value) {

@@ -100,6 +100,7 @@ type node struct {
 	sensitivity                   [creeplaw.MaxVariables]float64 // ∂ln ṗ/∂v
 	residual                      [unknowns]float64              // R, then F
 	jacobian                      [unknowns][unknowns + 1]float64
+	rest                          float64 // bound on what the last correction has left
 }
 
 // verdict is what evaluating a node, or solving for one, came to.

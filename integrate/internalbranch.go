@@ -92,12 +92,16 @@ type trialRates struct {
 	excess      [creeplaw.MaxVariables]float64
 	sensitivity [creeplaw.MaxVariables]float64
 	exponent    float64 // n
+	softening   float64 // ∂ln ṗ/∂u by the strain
 }
 
 // keep takes what the law says from x. All is over the units of the variables.
 func (c *coupled) keep(t *trialRates, x *node) {
 	m := c.memory
 	t.exponent = c.exponent(x, &x.rate.Creep)
+	if x.strain > 0 {
+		t.softening = x.rate.Creep.ByLogStrain * (c.elastic / x.strain)
+	}
 	for i := range c.count {
 		r := &x.rate.Internal[i]
 		t.perTime[i] = x.growth[i]
@@ -114,8 +118,11 @@ func (c *coupled) keep(t *trialRates, x *node) {
 }
 
 func (c *coupled) feedbackFromTrial(x *node, t *trialRates) (feedback float64) {
-	if c.creeps && !(t.exponent > 0) {
-		return math.Inf(1)
+	if c.creeps {
+		if !(t.exponent > 0) {
+			return math.Inf(1)
+		}
+		feedback = math.Max(0, t.softening*x.fraction)
 	}
 	var scale [creeplaw.MaxVariables]float64
 	for i := range c.count {

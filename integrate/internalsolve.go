@@ -9,15 +9,16 @@ import (
 // variables and creep proves that it is the only one in reach (see contracts). The rest is left to walk, which follows the
 // curve of solutions from its beginning.
 func (c *coupled) solve(x *node) Code {
-	x.v, x.logTime = c.before, c.logTime
-	c.creeps = false
+	x.v, x.logTime, x.odds = c.before, c.logTime, 0
+	if c.start == 0 && c.trial > 0 {
+		x.odds = 0x1p-20 // where hardening starts from zero strain the rate is infinite, and no exponent can be seen
+	}
 	if v := c.evaluate(x); v == undefined {
 		return LawUndefined
 	}
 	level := c.logTime - c.logElastic + x.rate.LogRate
-	if c.trial > 0 && (level >= negligible || c.start == 0 && math.IsInf(level, 1)) {
-		c.creeps = true
-	} else if c.count == 0 {
+	c.creeps = c.trial > 0 && level >= negligible
+	if !c.creeps && c.count == 0 {
 		return 0
 	}
 	var t trialRates
@@ -31,11 +32,9 @@ func (c *coupled) solve(x *node) Code {
 // guess sets x near the solution from the law at the trial state, as if it were a power law in stress. It reports false where
 // that leads nowhere.
 func (c *coupled) guess(x *node) bool {
-	if c.creeps && !c.guessCreep(x) {
-		return false
-	}
 	logKept := 0.0
 	if c.creeps {
+		c.guessCreep(x)
 		logKept = -math.Log1p(x.odds)
 	}
 	shift := 0.0
@@ -69,25 +68,15 @@ func (c *coupled) guess(x *node) bool {
 }
 
 // guessCreep sets z as relaxation.solve does, with the variables as they were.
-func (c *coupled) guessCreep(x *node) bool {
+func (c *coupled) guessCreep(x *node) {
 	l := &x.rate.Creep
 	level, slope := c.logTime-c.logElastic+x.rate.LogRate, 1.0
-	switch hardening := -l.ByLogStrain; {
-	case math.IsInf(x.rate.LogRate, 1):
-		x.odds = 1 // hardening from zero strain: look from half the strain the step could reach
-		if c.evaluate(x); !finite(x.rate.LogRate) {
-			return false
-		}
-		slope = 1 - math.Min(l.ByLogStrain, 0)
-		level = (c.logTime - c.logElastic + x.rate.LogRate) / slope
-	case hardening > 0 && c.start < c.elastic:
-		if l := (level - hardening*math.Log(c.elastic/c.start)) / (1 + hardening); l < level {
+	if hardening := -l.ByLogStrain; hardening > 0 && x.strain < c.elastic {
+		if l := (level - hardening*math.Log(c.elastic/x.strain)) / (1 + hardening); l < level {
 			level, slope = l, 1+hardening
 		}
 	}
-	n := math.Max(c.exponent(x, l), 0) / slope
-	x.odds = firstGuess(level, n)
-	return true
+	x.odds = firstGuess(level, math.Max(c.exponent(x, l), 0)/slope)
 }
 
 // effort is how far an iteration goes.
@@ -95,10 +84,11 @@ type effort struct {
 	corrections int
 	done        float64 // size of what is left
 	first       float64 // largest first correction that is trusted
+	increments  bool    // whether increments of the variables count for themselves, not only by what they do to the rates
 }
 
 var (
-	exact = effort{corrections: 9, done: 1e-13, first: math.Inf(1)}
+	exact = effort{corrections: 9, done: 1e-13, first: math.Inf(1), increments: true}
 	rough = effort{corrections: 4, done: 1e-6, first: 0.5}
 )
 
@@ -120,7 +110,7 @@ func (c *coupled) correct(x *node, held int, e effort) (v verdict, first float64
 		if !c.linear(x, held, &d, nil) {
 			return tooFar, first
 		}
-		size, relative := c.measure(x, &d)
+		size, relative := c.measure(x, &d, e.increments)
 		if i == 0 {
 			if first = size; !(size <= e.first) {
 				return tooFar, first
@@ -128,8 +118,9 @@ func (c *coupled) correct(x *node, held int, e effort) (v verdict, first float64
 		}
 		c.move(x, &d, c.leash(x, &d, size))
 		contraction := math.Min(1, relative/before)
+		x.rest = relative * contraction // the next correction would be smaller
 		switch {
-		case relative*contraction <= e.done && size < 4e-9+e.done:
+		case x.rest <= e.done && size < 4e-9+e.done:
 			return fine, first
 		case contraction > 0.1 && relative < 1e-7:
 			return c.stagnation(x, relative), first
@@ -155,22 +146,35 @@ func (c *coupled) stagnation(x *node, size float64) verdict {
 // direction is a change of the coordinates: the variables, z where there is creep, ln Δt.
 type direction [unknowns + 1]float64
 
-// measure is the size of a correction by what it does to the rates, and relative to the increments of the step.
-func (c *coupled) measure(x *node, d *direction) (size, relative float64) {
-	size = math.Abs(d[c.size()])
+// measure is the size of a correction by what it does to the rates; and the size that must vanish, of every coordinate and,
+// if asked for, relative to the increments of the variables in this step.
+func (c *coupled) measure(x *node, d *direction, increments bool) (size, rest float64) {
 	if c.creeps {
-		size = math.Max(size, math.Abs(d[c.count])*(1+x.fraction*math.Abs(x.rate.Creep.ByLogStress)))
+		size = math.Abs(d[c.count]) * (1 + x.fraction*math.Abs(x.rate.Creep.ByLogStress))
+	}
+	rest = math.Abs(d[c.size()])
+	grown := 0.0 // what the time alone adds to an increment, relative to it
+	if rest > 0 {
+		grown = math.Expm1(math.Min(rest, 700))
 	}
 	for i := range c.count {
-		dv := math.Abs(d[i])
+		dv, weight := math.Abs(d[i]), c.weight(x, i)
+		if grown > 0 {
+			size = math.Max(size, grown*math.Abs(x.increment[i])*weight/math.Max(1, math.Abs(x.jacobian[i][i])))
+		}
 		if dv == 0 {
 			continue
 		}
-		size = math.Max(size, dv*c.weight(x, i))
-		relative = math.Max(relative, dv/(math.Abs(x.increment[i])+1e-4*math.Abs(x.v[i])))
+		size = math.Max(size, dv*weight)
+		if increments {
+			rest = math.Max(rest, dv/(math.Abs(x.increment[i])+1e-4*math.Abs(x.v[i])+negligibleIncrement))
+		}
 	}
-	return size, math.Max(size, relative)
+	return size, math.Max(size, rest)
 }
+
+// negligibleIncrement is an increment of a variable over its unit that would not show after 1e6 steps.
+const negligibleIncrement = 1e-22
 
 // weight is the change of a variable that matters, inverted: what moves the creep rate by a factor e, or the way to the limit.
 func (c *coupled) weight(x *node, i int) float64 {

@@ -205,7 +205,7 @@ func (m *Material) writeInternal(out *Result, old *State, inc *Increment, t *tri
 	for i := range c.count {
 		out.State.Internal[i] = x.v[i] * m.memory.unit[i]
 	}
-	out.Iterations, out.Residual = max(c.evaluations-1, 0), 0
+	out.Iterations, out.Residual = max(c.evaluations-1, 0), x.rest
 
 	fillTangent(&out.Tangent, t.bulk, keep, 3*t.shear*fall*answers[0].z, &n)
 	byMean, byPrincipal := c.trial*fall*answers[2].z*t.bulk, c.trial*fall*answers[3].z*2*t.shear

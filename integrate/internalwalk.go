@@ -24,7 +24,8 @@ type walker struct {
 }
 
 const (
-	mostWalkSteps  = 2000
+	mostWalkSteps  = 20000
+	mostStarts     = 30
 	firstWalkStep  = 0.5
 	shortestStep   = 1e-9
 	bearableError  = 0.1  // of a prediction, in the logarithms of the rates
@@ -40,71 +41,105 @@ func (w *walker) run() Code {
 	}
 	w.length = firstWalkStep
 	for range mostWalkSteps {
-		if w.atLimit(&w.at) {
-			w.end = w.at.logTime
-			return BeyondRupture
-		}
-		if w.length < shortestStep {
+		done := onTheWay
+		switch rest := w.target - w.at.logTime; {
+		case w.atLimit(&w.at):
+			w.end, done = w.at.logTime, ended
+		case w.locate && rest < -1:
+			return NoConvergence
+		case w.length < shortestStep:
 			if !w.roundCorner() {
 				return w.stuck()
 			}
-			continue
+		case !w.locate && w.length*w.along[w.size()] >= rest:
+			done = w.arrive(rest)
+		default:
+			done = w.step()
 		}
-		if rest := w.target - w.at.logTime; !w.locate && w.length*w.along[w.size()] >= rest {
-			if w.arrive(rest) {
-				return 0
+		switch done {
+		case arrived:
+			if w.atLimit(&w.at) {
+				return BeyondRupture
 			}
-			continue
-		}
-		if w.step() {
+			return 0
+		case ended:
 			return BeyondRupture
 		}
 	}
 	return NoConvergence
 }
 
-// begin finds a point of the curve where the variables have hardly moved.
+// begin finds a point of the curve where the rates have hardly changed.
 func (w *walker) begin() Code {
 	x := &w.at
 	x.v, x.logTime = w.before, w.target
+	if w.creeps {
+		x.odds = 0x1p-60
+		if w.start == 0 {
+			x.odds = 0x1p-20 // where hardening starts from zero strain its exponents are of use only further on
+		}
+	}
+	if w.evaluate(x) == undefined {
+		return LawUndefined
+	}
+	shrink := math.Min(w.startShrink(x), 0.5)
+	for range mostStarts {
+		switch w.beginAt(shrink) {
+		case fine:
+			return 0
+		case undefined:
+			return LawUndefined
+		}
+		shrink *= 1e-3
+	}
+	return NoConvergence
+}
+
+// beginAt tries to begin where a fraction u has relaxed, or, without creep, after that fraction of the step.
+func (w *walker) beginAt(fraction float64) verdict {
+	x := &w.at
+	x.v = w.before
 	held := w.size()
 	if w.creeps {
 		held = w.count
-		x.odds = 0x1p-60
-		if w.start == 0 {
-			x.odds = 0x1p-10 // where hardening starts from zero strain its exponents are of use only further on
-		}
-	}
-	if v := w.evaluate(x); v == undefined {
-		return LawUndefined
-	}
-	shrink := w.startShrink(x)
-	if w.creeps {
-		x.odds = math.Min(shrink, 0.5)
-		if w.evaluate(x) == undefined {
-			return LawUndefined
+		x.odds = fraction
+		if v := w.evaluate(x); v == undefined {
+			return v
 		}
 		x.logTime = math.Log(x.fraction) + w.logElastic - x.rate.LogRate
-		for i := range w.count {
-			r := &x.rate.Internal[i]
-			x.v[i] += r.Value * math.Exp(x.logTime+r.LogScale) / w.memory.unit[i]
-		}
 	} else {
-		x.logTime += math.Log(math.Min(shrink, 1))
+		x.logTime = w.target + math.Log(fraction)
+		if v := w.evaluate(x); v == undefined {
+			return v
+		}
+	}
+	for i := range w.count {
+		r := &x.rate.Internal[i]
+		x.v[i] += r.Value * math.Exp(x.logTime+r.LogScale) / w.memory.unit[i]
 	}
 	if x.logTime > w.target {
 		x.odds *= math.Exp(w.target - x.logTime)
 		x.logTime, held = w.target, w.size()
 	}
-	if w.newton(x, held, exact) != fine {
-		return w.fault(x)
+	e := exact
+	e.first = bearableError
+	if v := w.newton(x, held, e); v != fine {
+		return v
 	}
 	var d direction
-	if w.evaluate(x) != fine || !w.linear(x, w.size(), &d, &w.along) {
-		return w.fault(x)
+	if v := w.evaluate(x); v != fine {
+		return v
+	}
+	if !w.linear(x, w.size(), &d, &w.along) {
+		return tooFar
+	}
+	for i := range w.count {
+		if math.Abs(x.v[i]-w.before[i])*w.weight(x, i) > 2*bearableError {
+			return tooFar // the rates change faster than could be seen from the start
+		}
 	}
 	w.normalise(&w.along)
-	return 0
+	return fine
 }
 
 // startShrink is the fraction relaxed (or, without creep, the fraction of the step) at which the rates change by startFeedback.
@@ -142,14 +177,6 @@ func (w *walker) strainShare() float64 {
 	return w.elastic / w.start
 }
 
-// fault is the reason why a first point could not be found.
-func (w *walker) fault(x *node) Code {
-	if w.evaluate(x) == undefined {
-		return LawUndefined
-	}
-	return NoConvergence
-}
-
 // normalise scales a direction to the largest weighted component 1.
 func (w *walker) normalise(d *direction) {
 	s := 1 / w.reach(&w.at, d)
@@ -185,7 +212,7 @@ func (w *walker) fastest() (held int) {
 }
 
 // arrive tries to solve at the target time from the current point. If that fails the next step is half as long.
-func (w *walker) arrive(rest float64) bool {
+func (w *walker) arrive(rest float64) progress {
 	y := w.at
 	length := rest / w.along[w.size()]
 	if length > 0 {
@@ -194,26 +221,41 @@ func (w *walker) arrive(rest float64) bool {
 	y.logTime = w.target
 	e := exact
 	e.first = 0.5
-	if w.newton(&y, w.size(), e) == fine && w.connected(&y, length) {
+	if w.newton(&y, w.size(), e) == fine && w.connected(&y, rest) {
 		w.at = y
-		return true
+		return arrived
 	}
 	w.length = math.Min(w.length, length) / 2
-	return false
+	return onTheWay
 }
 
-// connected reports whether y is the next point of the curve: near where the direction led, and with a direction of its own
-// that has not turned much and still leads to longer times.
-func (w *walker) connected(y *node, length float64) bool {
+// connected reports whether y, a time rest later, is the next point of the curve: its direction has not turned much and still
+// leads to longer times, and the way there is what the directions at both ends tell of.
+func (w *walker) connected(y *node, rest float64) bool {
 	var d, along direction
-	if !w.linear(y, w.size(), &d, &along) {
+	n := w.size()
+	if !w.linear(y, n, &d, &along) || w.turn(y, &along) > bearableTurn || w.softens(y) {
 		return false
 	}
-	return w.turn(y, &along) <= bearableTurn && w.distance(y, length) <= 0.5*math.Max(length, 0.1)
+	way := w.way(y)
+	for i := range n {
+		d[i] = way[i] - 0.5*rest*(w.along[i]/w.along[n]+along[i])
+	}
+	d[n], way[n] = 0, 0
+	return w.reach(y, &d) <= 0.2*w.reach(y, &way)+0.1
 }
 
-// step goes on by one step of at most the current length. It reports whether the curve has been found to end.
-func (w *walker) step() (ended bool) {
+// progress is what a step of the walk came to.
+type progress int
+
+const (
+	onTheWay progress = iota // the current point moved on, or the next step is shorter
+	arrived                  // the current point is the solution at the target
+	ended                    // the curve turns back before the target
+)
+
+// step goes on by one step of at most the current length.
+func (w *walker) step() progress {
 	y := w.at
 	held := w.fastest()
 	length := w.length * w.leash(&y, scaled(w.along, w.length), 0)
@@ -222,24 +264,42 @@ func (w *walker) step() (ended bool) {
 	var d, along direction
 	if v != fine || !(first <= 2*bearableError) || !w.linear(&y, held, &d, &along) {
 		w.length = length / 3
-		return false
+		return onTheWay
 	}
-	if dot := along[held] * w.along[held]; dot < 0 {
-		for i := range along {
-			along[i] = -along[i]
-		}
+	if along[held]*w.along[held] < 0 {
+		along = *scaled(along, -1)
 	}
 	if w.turn(&y, &along) > bearableTurn {
 		w.length = length / 2
-		return false
+		return onTheWay
+	}
+	along = *scaled(along, 1/w.reach(&y, &along))
+	if w.bends(&y, &along, length) {
+		w.length = length / 2
+		return onTheWay
 	}
 	return w.accept(&y, &along, length, first)
+}
+
+// bends reports whether ln Δt between here and y may have done something that the directions at both ends do not tell of, such
+// as turning back and forth: when it did not rise as they say, or the softening by the creep strain changed much.
+func (w *walker) bends(y *node, along *direction, length float64) bool {
+	n := w.size()
+	rise := y.logTime - w.at.logTime
+	byEnds := 0.5 * length * (w.along[n] + along[n])
+	return math.Abs(rise-byEnds) > 0.2*math.Abs(rise)+0.1 || w.softens(y)
+}
+
+// softens reports whether the softening by the creep strain, which no coordinate stands for, has changed much from here to y.
+func (w *walker) softens(y *node) bool {
+	before, after := w.at.share*w.at.rate.Creep.ByLogStrain, y.share*y.rate.Creep.ByLogStrain
+	return math.Abs(after-before) > 0.3*(1+math.Abs(before)) && math.Max(before, after) > 0
 }
 
 // roundCorner gets past a corner of the curve, as where the rupture stress passes through zero and damage stops: a small
 // step with another coordinate held, whose end is near enough to be on the curve whatever its direction.
 func (w *walker) roundCorner() bool {
-	const small, near = 1e-6, 1e-4
+	const small, near = 1e-6, 0.05
 	for held := w.size(); held >= 0; held-- {
 		if w.along[held] == 0 {
 			continue
@@ -248,7 +308,10 @@ func (w *walker) roundCorner() bool {
 		w.move(&y, &w.along, small)
 		v, first := w.correct(&y, held, rough)
 		var d, along direction
-		if v != fine || !(first <= near) || !w.linear(&y, held, &d, &along) || w.distance(&y, 0) > near {
+		if v != fine || !(first <= near) || !w.linear(&y, held, &d, &along) {
+			continue
+		}
+		if way := w.way(&y); w.reach(&y, &way) > near {
 			continue
 		}
 		if along[held]*w.along[held] < 0 {
@@ -263,27 +326,54 @@ func (w *walker) roundCorner() bool {
 	return false
 }
 
-// accept moves to y, unless the curve turned back on the way: then the step is shortened until it is clear whether it reaches
-// the target before, and the end reported.
-func (w *walker) accept(y *node, along *direction, length, first float64) (ended bool) {
+// accept moves to y, unless the target lies on the way there, or the curve turned back: then the step is shortened until it is
+// clear whether it reaches the target before.
+func (w *walker) accept(y *node, along *direction, length, first float64) progress {
 	n := w.size()
-	scale := 1 / w.reach(y, along)
-	for i := range along {
-		along[i] *= scale
-	}
-	if along[n] <= 0 {
+	switch {
+	case along[n] <= 0:
 		top := crest(w.at.logTime, y.logTime, w.along[n]*length, along[n]*length)
 		doubt := (top - math.Max(w.at.logTime, y.logTime)) + 4*epsilon*math.Abs(top)
 		if length < 1e-6 || !w.locate && top+doubt < w.target {
 			w.end = top
-			return true
+			return ended
 		}
 		w.length = length / 2
-		return false
+		return onTheWay
+	case w.locate && w.atLimit(y) && length > 1e-6:
+		w.length = length / 2
+		return onTheWay
+	case !w.locate && y.logTime > w.target:
+		if w.between(y) {
+			return arrived
+		}
+		w.length = length / 2
+		return onTheWay
 	}
 	w.at, w.along = *y, *along
 	w.length = length * math.Min(longestStretch, math.Sqrt(bearableError/math.Max(first, 1e-6)))
-	return false
+	return onTheWay
+}
+
+// between solves at the target time, which lies between the current point and y.
+func (w *walker) between(y *node) bool {
+	f := (w.target - w.at.logTime) / (y.logTime - w.at.logTime)
+	x := w.at
+	for i := range w.count {
+		x.v[i] += f * (y.v[i] - x.v[i])
+	}
+	if w.creeps {
+		x.odds *= math.Pow(y.odds/x.odds, f)
+	}
+	x.logTime = w.target
+	e := exact
+	e.first = 1
+	var d, along direction
+	if w.newton(&x, w.size(), e) != fine || !w.linear(&x, w.size(), &d, &along) || w.turn(&x, &along) > bearableTurn {
+		return false
+	}
+	w.at = x
+	return true
 }
 
 // turn is the weighted difference between the direction of the curve here and at y, both of length 1.
@@ -297,16 +387,16 @@ func (w *walker) turn(y *node, along *direction) float64 {
 	return w.reach(y, &d)
 }
 
-// distance is how far y is from the point a length along the direction from here.
-func (w *walker) distance(y *node, length float64) float64 {
-	var d direction
+// way is the change of the coordinates from here to y.
+func (w *walker) way(y *node) (d direction) {
 	for i := range w.count {
-		d[i] = y.v[i] - w.at.v[i] - length*w.along[i]
+		d[i] = y.v[i] - w.at.v[i]
 	}
 	if w.creeps {
-		d[w.count] = math.Log(y.odds/w.at.odds) - length*w.along[w.count]
+		d[w.count] = math.Log(y.odds / w.at.odds)
 	}
-	return w.reach(y, &d)
+	d[w.size()] = y.logTime - w.at.logTime
+	return d
 }
 
 // stuck is the reason why no step is short enough: the curve leads out of the domain of the law, or to infinite rates.

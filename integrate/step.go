@@ -206,8 +206,9 @@ func fillTangent(c *tensor.Tangent, bulk, keep, along float64, n *tensor.Sym) {
 }
 
 // Explain tells why a step was refused. It takes the error of Step and the same arguments, and returns an *UpdateError that
-// names the quantity and its value, and the law's own reason where it has one. An error that is not a Code comes back as it
-// is.
+// names the quantity and its value, and the law's own reason where it has one. For BeyondRupture the value is the time within
+// the step at which its solution ends: a step that long, or a little less, can still be taken. An error that is not a Code
+// comes back as it is.
 func (m *Material) Explain(err error, old *State, inc Increment) error {
 	code, ok := err.(Code)
 	if !ok {
@@ -217,7 +218,14 @@ func (m *Material) Explain(err error, old *State, inc Increment) error {
 	case BadIncrement:
 		return inc.fault()
 	case BadState:
+		if fault := m.memory.fault(old); fault != nil {
+			return fault
+		}
 		return old.fault()
+	case BeyondRupture:
+		if time, found := m.ruptureWithin(old, &inc); found {
+			return &UpdateError{Code: code, Quantity: "time within the step at which its solution ends", Value: time}
+		}
 	case OutsideTable:
 		return &UpdateError{Code: code, Quantity: "temperature for " + m.tableWithout(inc.Temperature), Value: inc.Temperature}
 	}
