@@ -15,8 +15,6 @@ const (
 	suspects = 12
 	// samePlace is the distance in the logarithm of an argument within which two lines have the same breakpoint.
 	samePlace = 1e-5
-	// mostPlaces are told apart; more of them wander with the other arguments.
-	mostPlaces = 6
 )
 
 // brk is a jump or a corner on a line.
@@ -221,13 +219,20 @@ func (x *examination) namedBreaksOf(l *line) (found []brk) {
 	return found
 }
 
-// noteBreaks makes findings of the jumps and corners along one argument: one for each place, if the lines agree on a few of
-// them, and otherwise one for all.
+// noteBreaks makes findings of the jumps and corners along one argument: one for each place if the lines agree on it, and one
+// for all if the place moves with the other arguments.
 func (x *examination) noteBreaks(along Argument, found []brk) {
 	for _, jumps := range []bool{true, false} {
 		var places []float64
+		ofLine := map[*line]int{}
+		most := 0 // on one line
 		for _, b := range found {
-			if (b.jump != 0) == jumps && !slices.ContainsFunc(places, func(u float64) bool { return math.Abs(u-b.u) < samePlace }) {
+			if (b.jump != 0) != jumps {
+				continue
+			}
+			ofLine[b.line]++
+			most = max(most, ofLine[b.line])
+			if !slices.ContainsFunc(places, b.near) {
 				places = append(places, b.u)
 			}
 		}
@@ -236,12 +241,10 @@ func (x *examination) noteBreaks(along Argument, found []brk) {
 			if (b.jump != 0) != jumps {
 				continue
 			}
-			place := ""
-			if len(places) <= mostPlaces {
-				place = fmt.Sprint(slices.IndexFunc(places, func(u float64) bool { return math.Abs(u-b.u) < samePlace }))
-			}
 			f := x.describeBreak(along, b)
-			if place == "" {
+			place := fmt.Sprint(slices.IndexFunc(places, b.near))
+			if len(places) > most {
+				place = ""
 				f.Sentence += fmt.Sprintf(" The place moves with the other arguments, here between %.4g and %.4g.",
 					math.Exp(places[0]), math.Exp(places[len(places)-1]))
 			}
@@ -249,6 +252,8 @@ func (x *examination) noteBreaks(along Argument, found []brk) {
 		}
 	}
 }
+
+func (b *brk) near(u float64) bool { return math.Abs(u-b.u) < samePlace }
 
 func (x *examination) describeBreak(along Argument, b brk) Finding {
 	p := b.line.point(b.u)
@@ -267,7 +272,7 @@ func (x *examination) describeBreak(along Argument, b brk) Finding {
 	f := x.found(RateJump, Fault, p)
 	f.By = along
 	f.Numbers = []Number{{"factor", math.Exp(b.jump), ""}}
-	f.Sentence = fmt.Sprintf("The rate jumps by a factor of %.6g at %s: a step that would end there has no solution.",
+	f.Sentence = fmt.Sprintf("The rate jumps by a factor of %.6g at %s: a step that would end there has no solution, or several.",
 		math.Exp(b.jump), at)
 	if along == Temperature {
 		f.Sentence = fmt.Sprintf("The rate jumps by a factor of %.6g at %s: results depend on which side of it a temperature field "+
@@ -295,7 +300,7 @@ func (x *examination) onsets(l *line) {
 			f := x.found(RateJump, Fault, p)
 			f.By = l.along
 			f.Numbers = []Number{x.rateNumber("rate", math.Exp(x.ln(p)))}
-			f.Sentence = fmt.Sprintf("The rate jumps between zero and %.4g at %v %.6g %s: a step that would end there has no solution.",
+			f.Sentence = fmt.Sprintf("The rate jumps between zero and %.4g at %v %.6g %s: a step that would end there has no solution, or several.",
 				math.Exp(x.ln(p)), l.along, math.Exp(u), l.along.unit(&x.settings))
 			l.jumps = append(l.jumps, u)
 			x.note(f, math.Inf(1), "onset")

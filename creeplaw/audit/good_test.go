@@ -1,6 +1,7 @@
 package audit_test
 
 import (
+	"slices"
 	"testing"
 
 	"github.com/stretchr/testify/require"
@@ -103,9 +104,33 @@ func goodCurves() []good {
 	}
 }
 
+// goodVariables are laws with internal variables, seeing the greatest principal and the mean stress too.
+func goodVariables() []good {
+	f := must(creeplaw.NewArrheniusAt(300e3, reference))
+	rupture := creeplaw.RuptureStress{Principal: 0.3, Mean: 0.1}
+	cavitation := creeplaw.CavitationParameters{Prefactor: 1e-7, StressCoefficient: 0.05, Hardening: 3e4, HardeningSaturation: 0.5,
+		Ageing: 3e-5, Cavitation: 8, TriaxialityExponent: 2, RuptureCavitation: 1.0 / 3, CreepTemperature: f, AgeingTemperature: f}
+	softens := audit.Softening
+	ages := []audit.Kind{softens, audit.ClockDependence, audit.ExplodesBeyond, audit.ExponentChanges}
+	return []good{
+		{"Kachanov–Rabotnov, Hayhurst's rupture stress", must(creeplaw.NewKachanovRabotnov(creeplaw.KachanovRabotnovParameters{
+			Prefactor: 1e-6, StressExponent: 5, DamagePrefactor: 1e-5, DamageStressExponent: 4, DamageExponent: 6,
+			ReferenceStress: 100, RuptureStress: rupture, CreepTemperature: f, DamageTemperature: f})), []audit.Kind{softens}},
+		{"Liu–Murakami", must(creeplaw.NewLiuMurakami(creeplaw.LiuMurakamiParameters{Prefactor: 1e-6, StressExponent: 5,
+			DamagePrefactor: 5e-5, DamageStressExponent: 4, DamageExponent: 5, ReferenceStress: 100, RuptureStress: rupture,
+			CreepTemperature: f, DamageTemperature: f})), []audit.Kind{softens}},
+		{"Perrin–Hayhurst", must(creeplaw.NewPerrinHayhurst(cavitation)), ages},
+		{"Kowalewski–Hayhurst–Dyson", must(creeplaw.NewKowalewskiHayhurstDyson(cavitation)), ages},
+		{"Anand", must(creeplaw.NewAnand(creeplaw.AnandParameters{InitialResistance: 150, ActivationEnergy: 300e3,
+			Prefactor: 3e8, StressMultiplier: 5, RateSensitivity: 0.3, Hardening: 8000, SaturationCoefficient: 180,
+			SaturationExponent: 0.02, HardeningExponent: 1.3})), []audit.Kind{audit.ExplodesBeyond, audit.ExponentChanges,
+			audit.VariableRecovers}},
+	}
+}
+
 // TestGoodLaws holds the audit to find no fault in sound laws, and nothing but what their nature is.
 func TestGoodLaws(t *testing.T) {
-	for _, g := range append(goodLaws(), goodCurves()...) {
+	for _, g := range slices.Concat(goodLaws(), goodCurves(), goodVariables()) {
 		t.Run(g.name, func(t *testing.T) {
 			report, err := audit.Run(g.law, domain, audit.Settings{Units: megapascalHour})
 			require.NoError(t, err)

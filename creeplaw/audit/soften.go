@@ -144,6 +144,10 @@ func (x *examination) noteSoftening(soft softSpot) {
 	f.Sentence = fmt.Sprintf("The rate grows with creep strain from %.3g on, which is tertiary creep if it is meant: a backward-Euler step "+
 		"at fixed stress has a solution connected to the start only while Δt·∂ṗ/∂p < 1 at its end, that is up to the first maximum of "+
 		"(p₁-p₀)/ṗ(p₁), here %.3g %s; %s.", soft.onset, least, unit, held)
+	if math.IsInf(least, 1) {
+		f.Sentence = fmt.Sprintf("The rate grows with creep strain from %.3g on, which is tertiary creep if it is meant, but by less than in "+
+			"proportion: (p₁-p₀)/ṗ(p₁) has no maximum, and a backward-Euler step of any size has its solution.", soft.onset)
+	}
 	x.measures.LargestStep, x.measures.SufficientStiffness = least, soft.stiffness
 	x.measures.LargestFirstStep, _ = f.Number(firstStep)
 	x.measures.LargestStepAtFixedStrain = math.NaN()
