@@ -339,17 +339,23 @@ func (f *follower) judge(h float64) float64 {
 	if creepFloor == 0 {
 		creepFloor = largest / (3 * f.tried.shear)
 	}
-	relative := f.tolerance.Relative
+	// Errors of many steps add up: a step may use up the part of the tolerance that its creep strain is of the whole, and a
+	// little for its time and for being one. What adds up is of the fifth order in the step where the estimate is of the fourth, hence the power.
+	const idle, least, sharing = 0.1, 0.003, 4.0 / 5
+	time := least + idle*h/f.path.length
+	made := f.end.Equivalent - f.state.Equivalent
+	size := math.Max(stressFloor, math.Max(mises, f.mises))
+	whole := math.Max(creepFloor, f.end.Equivalent)
 	equivalent := e.creep.EquivalentStrain()
-	stress := 3 * f.tried.shear * equivalent / (relative * math.Max(stressFloor, math.Max(mises, f.mises)))
-	creep := math.Max(math.Abs(e.equivalent), equivalent) / (relative * math.Max(creepFloor, f.end.Equivalent))
+	stress := 3 * f.tried.shear * equivalent / (size * math.Pow(math.Min(1, 3*f.tried.shear*made/size+time), sharing))
+	creep := math.Max(math.Abs(e.equivalent), equivalent) / (whole * math.Pow(made/whole+time, sharing))
 	worst := math.Max(stress, creep)
 	for v := range count {
 		const floor = 0.1 // of the variable's unit: the way to its limit, or its initial value
 		scale := math.Max(math.Abs(f.end.Internal[v]), floor*f.material.memory.unit[v])
-		worst = math.Max(worst, math.Abs(e.internal[v])/(relative*scale))
+		worst = math.Max(worst, math.Abs(e.internal[v])/scale)
 	}
-	return worst
+	return worst / f.tolerance.Relative
 }
 
 func (f *follower) accept(h, worst float64) {
