@@ -30,6 +30,9 @@ func New(elastic Isotropic, law creeplaw.Law, options Options) (*Material, error
 	if law == nil {
 		return nil, &MaterialError{"creep law", math.NaN(), 0, "given"}
 	}
+	if _, ok := law.(creeplaw.During); ok {
+		return nil, &MaterialError{"creep law on a clock", math.NaN(), 0, "asked for by name, with NewTimeHardening"}
+	}
 	if err := elastic.check(); err != nil {
 		return nil, err
 	}
