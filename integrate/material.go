@@ -17,15 +17,18 @@ type Material struct {
 	law        creeplaw.Logarithmic
 	given      creeplaw.Law
 	memory     memory // internal variables of the law
+	plastic    *plasticity
 }
 
 // Options are what a material may have besides elasticity and a law. The zero Options are the documented defaults.
 type Options struct {
-	Expansion Expansion // free thermal strain; none by default
+	Expansion  Expansion  // free thermal strain; none by default
+	Plasticity Plasticity // rate-independent plasticity beside creep; none by default
 }
 
-// New builds a material. A nil law, an impossible elastic constant or expansion, or a law with impossible internal variables
-// is an error that names the quantity and its value (*MaterialError); no material is made.
+// New builds a material. A nil law, an impossible elastic constant, expansion or hardening, or a law with impossible internal
+// variables is an error that names the quantity and its value (*MaterialError); no material is made. Plasticity beside a law
+// with internal variables is a *CombinationError.
 func New(elastic Isotropic, law creeplaw.Law, options Options) (*Material, error) {
 	if law == nil {
 		return nil, &MaterialError{"creep law", math.NaN(), 0, "given"}
@@ -48,6 +51,9 @@ func New(elastic Isotropic, law creeplaw.Law, options Options) (*Material, error
 	}
 	var err error
 	if m.memory, err = newMemory(law); err != nil {
+		return nil, err
+	}
+	if m.plastic, err = newPlasticity(options.Plasticity, law); err != nil {
 		return nil, err
 	}
 	if elastic.constant() {

@@ -25,6 +25,7 @@ type Result struct {
 	Tangent       tensor.Tangent // ∂σ/∂ε of the discrete update [stress]; see below
 	ByTemperature tensor.Sym     // ∂σ/∂T of the discrete update at fixed strain [stress/K]
 	CreepStep     float64        // Δp: equivalent creep strain of the step [-]
+	PlasticStep   float64        // Δκ: equivalent plastic strain of the step [-]; 0 without plasticity or yielding
 	Iterations    int            // corrections the scalar solve made
 	Residual      float64        // what it left in ln Δp, relative to the law; 0 for an elastic step
 }
@@ -47,12 +48,19 @@ func (m *Material) Step(out *Result, old *State, inc Increment) error {
 }
 
 func (m *Material) step(out *Result, old *State, inc *Increment) Code {
+	if m.plastic != nil {
+		return m.stepPlastic(out, old, inc)
+	}
 	var t trial
 	if ok := t.set(m, old, inc); !(ok && inc.Dt >= 0 && inc.Temperature > 0 && old.Equivalent >= 0 && finite(inc.Dt+inc.Temperature+old.Equivalent)) {
 		return refusal(old, inc)
 	}
 	if m.memory.law != nil {
-		return m.stepInternal(out, old, inc, &t)
+		code := m.stepInternal(out, old, inc, &t)
+		if code == 0 {
+			out.State.Plastic, out.State.EquivalentPlastic, out.PlasticStep = old.Plastic, old.EquivalentPlastic, 0
+		}
+		return code
 	}
 	x := relaxed{kept: 1, strain: old.Equivalent}
 	problem := relaxation{law: m.law, trial: 3 * t.shear * t.equivalent, elastic: t.equivalent, start: old.Equivalent,
@@ -81,6 +89,10 @@ type trial struct {
 }
 
 func (m *Material) trialState(old *State, inc *Increment) (t trial, ok bool) {
+	if m.plastic != nil {
+		sum := old.inelastic()
+		old = &sum
+	}
 	ok = t.set(m, old, inc)
 	return t, ok
 }
@@ -164,6 +176,7 @@ func (out *Result) write(old *State, t *trial, x *relaxed, d linearised) {
 	out.CreepStep = x.fraction * t.equivalent
 	out.State.Equivalent = old.Equivalent + out.CreepStep
 	out.State.Internal = old.Internal
+	out.State.Plastic, out.State.EquivalentPlastic, out.PlasticStep = old.Plastic, old.EquivalentPlastic, 0
 	out.Iterations, out.Residual = x.iterations, x.residual
 
 	var n tensor.Sym // flow direction s/σₑ, the same for trial and end
@@ -213,6 +226,9 @@ func (m *Material) Explain(err error, old *State, inc Increment) error {
 	code, ok := err.(Code)
 	if !ok {
 		return err
+	}
+	if m.plastic != nil {
+		return m.explainPlastic(code, old, &inc)
 	}
 	switch code {
 	case BadIncrement:

@@ -20,6 +20,9 @@ func (m *Material) Stress(stress *tensor.Sym, end, old *State, inc Increment) er
 }
 
 func (m *Material) stress(stress *tensor.Sym, end, old *State, inc *Increment) Code {
+	if m.plastic != nil {
+		return m.stressPlastic(stress, end, old, inc)
+	}
 	var t trial
 	if ok := t.set(m, old, inc); !(ok && inc.Dt >= 0 && inc.Temperature > 0 && old.Equivalent >= 0 && finite(inc.Dt+inc.Temperature+old.Equivalent)) {
 		return refusal(old, inc)
@@ -79,7 +82,7 @@ func (x *node) write(stress *tensor.Sym, end, old *State, t *trial) {
 	addMean(stress, mean)
 	step := x.fraction * t.equivalent
 	end.Equivalent = start.Equivalent + step
-	end.Internal = start.Internal
+	end.Internal, end.Plastic, end.EquivalentPlastic = start.Internal, start.Plastic, start.EquivalentPlastic
 }
 
 // write sets stress and state for the fraction of the trial deviator that crept away. end may be old.
@@ -92,5 +95,5 @@ func (t *trial) write(stress *tensor.Sym, end, old *State, fraction, kept float6
 	addMean(stress, mean)
 	step := fraction * t.equivalent
 	end.Equivalent = old.Equivalent + step
-	end.Internal = old.Internal
+	end.Internal, end.Plastic, end.EquivalentPlastic = old.Internal, old.Plastic, old.EquivalentPlastic
 }
