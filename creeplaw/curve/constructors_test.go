@@ -165,6 +165,17 @@ func TestMissingPartsAreNamed(t *testing.T) {
 	}
 }
 
+// TestLawsWithVariablesAreRefused: a damage law taken for a steady one would lose its damage.
+func TestLawsWithVariablesAreRefused(t *testing.T) {
+	damage := must(creeplaw.NewKachanovRabotnov(creeplaw.KachanovRabotnovParameters{Prefactor: 1e-15, StressExponent: 5,
+		DamagePrefactor: 1e-13, DamageStressExponent: 4.5, DamageExponent: 6}))
+	err := errorOf(curve.NewSum(curve.Steady(curve.RateOf{Law: damage})))
+	var lost *creeplaw.CompositionError
+	if !errors.As(err, &lost) || lost.Variable == "" {
+		t.Errorf("got %v", err)
+	}
+}
+
 // TestCurvesThatMakeNoLaw: one that never starts, one with too many terms.
 func TestCurvesThatMakeNoLaw(t *testing.T) {
 	late := must(curve.NewGrahamWalles(graham(1e-20, 5, 3, 1e5), graham(1e-15, 5, 1.5, 1e5)))

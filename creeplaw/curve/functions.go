@@ -190,7 +190,7 @@ func (c Product) prepare() (prepared, error) {
 
 // RateOf is the rate of a law of steady creep as a coefficient [1/time]: any law of package creeplaw that does not depend
 // on creep strain can be the steady part of a curve. The law is asked at zero strain; one that hardens from an infinite rate
-// there is undefined here (NaN).
+// there is undefined here (NaN), and one with internal variables, which would be lost, is a *creeplaw.CompositionError.
 type RateOf struct{ Law creeplaw.Law }
 
 // LogAt returns ln ṗ and its exponents.
@@ -199,6 +199,13 @@ func (c RateOf) LogAt(stress, temperature float64) LogValue { return logAt(c, st
 func (c RateOf) prepare() (prepared, error) {
 	if c.Law == nil {
 		return nil, &creeplaw.MissingError{Part: "law"}
+	}
+	if e, ok := c.Law.(creeplaw.Evolving); ok {
+		lost := &creeplaw.CompositionError{Law: "rate of a law in a curve", Variable: "the principal stress"}
+		if v := e.Variables(); len(v) > 0 {
+			lost.Variable = v[0].Name
+		}
+		return nil, lost
 	}
 	return rateOf{creeplaw.Log(c.Law)}, nil
 }

@@ -10,7 +10,7 @@ import (
 // TestLawsConform holds the law made from every curve of the catalogue to the rules of the conformance kit: in a box of
 // service conditions, and near zero strain. The logarithms range over nine decades of stress.
 func TestLawsConform(t *testing.T) {
-	points := 60
+	points := 90
 	if *campaign {
 		points = 1000
 	}
@@ -19,7 +19,7 @@ func TestLawsConform(t *testing.T) {
 			law := must(curve.NewStrainHardened(e.curve))
 			for _, strain := range []lawtest.Range{{1e-7, 0.05}, {1e-25, 1e-7}} {
 				results := lawtest.Run(t, law, lawtest.Box{
-					Claims:             lawtest.Logarithmic,
+					Claims:             lawtest.Logarithmic | lawtest.Explainer,
 					Stress:             lawtest.Range{40, 400},
 					Strain:             strain,
 					Temperature:        lawtest.Range{750, 950},

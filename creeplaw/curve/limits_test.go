@@ -1,6 +1,7 @@
 package curve_test
 
 import (
+	"errors"
 	"math"
 	"testing"
 
@@ -161,5 +162,33 @@ func TestLawIsUndefinedForImpossiblePoints(t *testing.T) {
 	misused := must(curve.NewStrainHardened(must(curve.NewSum(curve.Steady(curve.RateOf{Law: hardening})))))
 	if r := misused.Rate(creeplaw.Point{Stress: 100, Strain: 1e-3}); !math.IsNaN(r.Value) {
 		t.Errorf("%+v of a law that hardens taken for a steady one", r)
+	}
+}
+
+// TestUndefinedPointsAreExplained: by the quantity out of bounds, by a part that knows, or at the least by where it was.
+func TestUndefinedPointsAreExplained(t *testing.T) {
+	good := creeplaw.Point{Stress: 100, Strain: 1e-3, Temperature: 873}
+	table := must(creeplaw.NewFactorTable([]float64{800, 900}, []float64{1, 10}, creeplaw.TableOptions{}))
+	law := must(curve.NewStrainHardened(must(curve.NewSum(curve.Steady(
+		curve.Product{curve.Constant(1e-6), curve.Activated{Coefficient: powerAt(1, 2), Factor: table}})))))
+	if err := law.CheckPoint(good); err != nil {
+		t.Errorf("%v at %+v", err, good)
+	}
+	for quantity, spoil := range map[string]func(*creeplaw.Point){
+		"stress":       func(p *creeplaw.Point) { p.Stress = -1 },
+		"creep strain": func(p *creeplaw.Point) { p.Strain = nan },
+		"temperature":  func(p *creeplaw.Point) { p.Temperature = 950 },
+	} {
+		p := good
+		spoil(&p)
+		var domain *creeplaw.DomainError
+		if err := law.CheckPoint(p); !errors.As(err, &domain) || domain.Quantity != quantity {
+			t.Errorf("%v at %+v, want a DomainError of the %s", err, p, quantity)
+		}
+	}
+	broken := must(curve.NewStrainHardened(curve.Func(func(curve.Point) curve.Strain { return curve.Strain{Value: nan} })))
+	var undefined *creeplaw.UndefinedError
+	if err := broken.CheckPoint(good); !errors.As(err, &undefined) || undefined.Point != good {
+		t.Errorf("%v, want an UndefinedError", err)
 	}
 }

@@ -83,6 +83,9 @@ func (a *quickTerms) find(terms []Term, p creeplaw.Point, r *found) bool {
 		}
 		r.evaluations = evaluations
 		if math.Abs(d)*(1+math.Abs(k)) <= finished {
+			if !(m*(p.Strain/t) > smallest) {
+				return false // rounding of numbers that small, and math.Log of them, loses digits
+			}
 			a.result(r, p.Strain/t, d, k)
 			r.time = t + t*d
 			return true

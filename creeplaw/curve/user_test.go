@@ -128,7 +128,7 @@ func TestUsersCoefficient(t *testing.T) {
 		curve.Constant(2), sinh(1, 0.01, 2)}} {
 		law := must(curve.NewStrainHardened(must(curve.NewSum(curve.PowerOfTime(powerAt(1e-4, 4), 0.3), curve.Steady(c)))))
 		for _, r := range lawtest.Run(t, law, lawtest.Box{Claims: lawtest.Logarithmic, Stress: lawtest.Range{40, 400},
-			Strain: lawtest.Range{1e-7, 0.05}, Temperature: lawtest.Range{750, 950}, LogStress: lawtest.Range{1, 1e4}, Points: 50}) {
+			Strain: lawtest.Range{1e-7, 0.05}, Temperature: lawtest.Range{750, 950}, LogStress: lawtest.Range{1, 1e4}, Points: 90}) {
 			t.Logf("%s: %-30s %6d checks, worst %.2g of the allowed", name, r.Rule, r.Checks, r.Worst)
 		}
 	}
