@@ -97,7 +97,7 @@ func (h StrainHardened) Rate(p creeplaw.Point) creeplaw.Rate {
 		r.ByStrain = derivative(l.Value, l.ByLogStrain, p.Strain)
 	}
 	if p.Stress == 0 {
-		p.Stress, p.Strain = faint, math.Max(p.Strain, faint)
+		p.Stress, p.Strain = faint, max(p.Strain, faint)
 		l = h.LogRate(p)
 		r.ByStress = slopeFrom(Exponents{Value: l.Value, ByLogStress: l.ByLogStress})
 	}
@@ -152,8 +152,11 @@ func (h StrainHardened) logStart(p creeplaw.Point) creeplaw.LogRate {
 	if h.terms != nil {
 		first := sum{h.terms}.start(p.Stress, p.Temperature)
 		c, m := first.prefactor, first.exponent
-		if !(m < 1) {
+		switch {
+		case m == 1 || math.IsNaN(c.Value):
 			return creeplaw.LogRate{Value: c.Value, ByLogStress: c.ByLogStress, ByLogTemperature: c.ByLogTemperature}
+		case m > 1:
+			return creeplaw.LogRate{Value: math.Inf(-1)}
 		}
 		return creeplaw.LogRate{Value: math.Inf(1), ByLogStress: c.ByLogStress / m, ByLogStrain: (m - 1) / m,
 			ByLogTemperature: c.ByLogTemperature / m}

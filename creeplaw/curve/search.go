@@ -9,7 +9,9 @@ import "math"
 // The step is the root of a local model that meets value, slope and curvature of the curve, so the iteration is of third
 // order. The model is a power of time with an offset, a + b tᵏ, where the rate falls like a power (exact for primary creep,
 // for steady creep, for both of them apart, and for logarithmic creep), and an exponential, a + b e^(κt), where it falls or
-// rises faster than that (exact for a saturating or growing exponential).
+// rises faster than that (exact for a saturating or growing exponential). Where the model ends below the strain that is looked
+// for, something else still grows there, and the step goes to where the model has nothing more to give; where the model was
+// above it from the start, the step is a guess to the left.
 type search struct {
 	s           float64 // ln t
 	low, high   float64 // bracket of s
@@ -25,8 +27,7 @@ const (
 	// finished is the step, relative to what bends the curve, whose third power and square are lost in rounding: the value is
 	// corrected for the step to first order, the exponents are left.
 	finished = 1e-10
-	// longest is the longest step in ln t without a bracket, and an outermost bracket for a curve that cannot be inverted.
-	longest = 200
+	longest  = 200 // step in ln t
 )
 
 func newSearch(logTime float64) search {
