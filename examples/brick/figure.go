@@ -23,8 +23,6 @@ var (
 	blue       = color.RGBA{0, 114, 178, 255}
 	vermillion = color.RGBA{213, 94, 0, 255}
 	green      = color.RGBA{0, 158, 115, 255}
-	purple     = color.RGBA{204, 121, 167, 255}
-	orange     = color.RGBA{230, 159, 0, 255}
 	grey       = color.RGBA{140, 140, 140, 255}
 	pale       = color.RGBA{228, 228, 228, 255}
 )

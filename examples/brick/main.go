@@ -25,8 +25,8 @@ const (
 
 func main() { os.Exit(command(os.Args[1:], os.Stdout, os.Stderr)) }
 
-const helpText = `brick carries an eight-node brick of distorted shape, and seven of them in a patch, through load programs of creep with the
-material point of the library, and checks uniformity, closed forms and the global Newton iteration.
+const helpText = `brick carries an eight-node brick of distorted shape, and seven of them in a patch, through load programs of creep with
+the material point of the library, and checks uniformity, closed forms and the global Newton iteration.
 
 usage: brick [flags]
 
@@ -55,7 +55,8 @@ func parse(args []string, stdout, stderr io.Writer) (options, error) {
 	set.StringVar(&o.out, "out", "", "`folder` for brick.png and brick.svg; out beside the source of the example if empty")
 	set.Float64Var(&o.exponent, "exponent", 5, "stress `exponent` of Norton's law, 1 to 8")
 	set.Float64Var(&o.distortion, "distortion", 1, "`share` of the built-in distortion, 0 (a cube) to 1")
-	set.IntVar(&o.steps, "steps", 16, "time `steps` in a hold or in the heating, 8 to 64; studies of the error double it several times")
+	set.IntVar(&o.steps, "steps", 16,
+		"time `steps` in a hold or in the heating, 8 to 64; studies of the error double it several times")
 	err := set.Parse(args)
 	switch {
 	case errors.Is(err, flag.ErrHelp):

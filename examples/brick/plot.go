@@ -24,7 +24,8 @@ func (r *report) draw(folder string) ([]string, error) {
 }
 
 func (r *report) creepPanel() (*plot.Plot, error) {
-	panel := newPanel("Creep strain of the brick in the tension program (invented data)", "Time [h]", "Creep strain along the tension [%]")
+	panel := newPanel("Creep strain of the brick in the tension program (invented data)", "Time [h]",
+		"Creep strain along the tension [%]")
 	var x, y []float64
 	begun, total, above := 0.0, 0.0, 0.0
 	for _, s := range tensionProgram(r.steps) {
