@@ -91,10 +91,6 @@ func (a *relaxation) soften(x *relaxed, first creeplaw.LogRate) (code Code) {
 	return code
 }
 
-func (a *relaxation) unrelaxed(rate creeplaw.LogRate) relaxed {
-	return relaxed{kept: 1, strain: a.start, rate: rate}
-}
-
 // firstGuess returns the odds u/(1-u) that solve z + (n-1) softplus(z) = level with z = ln(odds): the problem of a power law
 // whose exponent n (over the stiffening) is the local one. Far from the corner it starts from the asymptotes z = level and
 // z = level/n, near it from the hyperbola that has them, and improves that by third-order steps in rational arithmetic. The
@@ -172,7 +168,7 @@ func (a *relaxation) iterate(x *relaxed, first creeplaw.LogRate, odds float64) C
 			return LawUndefined
 		case x.rate.ByLogStrain > 0: // not to be seen at zero strain, where the exponent vanishes
 			return a.soften(x, first)
-		case small && size <= tolerance, (size < 1e-6 || x.rate.ByLogStress > 1e8) && size <= a.rounding(x, logFraction):
+		case small && size <= tolerance, (size < 1e-6 || x.rate.ByLogStress-x.rate.ByLogStrain > 1e8) && size <= a.rounding(x, logFraction):
 			x.residual = size
 			return 0
 		}
@@ -272,7 +268,7 @@ func (a *relaxation) settle(x *relaxed, low, size float64) Code {
 		x.residual = 0
 		return 0
 	}
-	if size <= a.rounding(x, math.Log(x.fraction)) {
+	if size <= 4*a.rounding(x, math.Log(x.fraction)) { // the law rounds as well
 		return 0
 	}
 	return settled(size)
@@ -304,9 +300,10 @@ func (a *relaxation) evaluate(x *relaxed, odds float64) (f, logFraction float64)
 	return f, logFraction
 }
 
-// rounding is the size of F that is rounding of its own terms, and of the stress the law was asked at.
+// rounding is the size of F that is rounding of its own terms, and of the stress and strain the law was asked at.
 func (a *relaxation) rounding(x *relaxed, logFraction float64) float64 {
-	return epsilon * (math.Abs(logFraction) + math.Abs(a.logTime) + math.Abs(x.rate.Value) + 2*math.Abs(x.rate.ByLogStress))
+	return epsilon * (math.Abs(logFraction) + math.Abs(a.logTime) + math.Abs(x.rate.Value) +
+		2*math.Abs(x.rate.ByLogStress) + 2*math.Abs(x.rate.ByLogStrain))
 }
 
 // slope is dF/dz: (1-u)(1 + hardening) + u n, with the hardening seen by the increment.

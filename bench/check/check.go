@@ -96,7 +96,7 @@ func within(t TB, label string, got, want, limit, tol float64, kind string) bool
 	if !usable(t, label, tol) {
 		return false
 	}
-	if d := distance(got, want); !(d <= limit) {
+	if d := distance(got, want); !(d <= limit) || math.IsInf(limit, 1) && d != 0 { // an infinite want allows only itself
 		t.Errorf("%s: got %.17g, want %.17g: difference %.3g exceeds %.3g (%s tolerance %.3g)", label, got, want, d, limit,
 			kind, tol)
 		return false

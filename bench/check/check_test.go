@@ -28,6 +28,7 @@ func TestComparisonsFailWhenTheyShould(t *testing.T) {
 		{"infinite tolerance", func(t TB) bool { return Abs(t, "", 1, 2, inf) }, false},
 		{"equal infinities", func(t TB) bool { return Abs(t, "", inf, inf, 0) }, true},
 		{"opposite infinities", func(t TB) bool { return Abs(t, "", inf, -inf, 1) }, false},
+		{"finite for infinite", func(t TB) bool { return Rel(t, "", 1, inf, 1e-3) }, false},
 		{"relative to zero", func(t TB) bool { return Rel(t, "", 1e-300, 0, 1e-3) }, false},
 		{"scaled", func(t TB) bool { return Scaled(t, "", 1e-9, 0, 100, 1e-10) }, true},
 		{"slice", func(t TB) bool { return Slice(t, "", []float64{1, 2}, []float64{1, 2}, 1, 0) }, true},
