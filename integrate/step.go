@@ -36,6 +36,9 @@ type Result struct {
 //
 // and writes stress, state and the exact derivatives of the update to out. Any step size is accepted. It allocates nothing.
 //
+// The strain is total, so the elastic strain is a difference: once creep has outgrown it, rounding of the strains shows in the
+// stress as modulus × strain × 2⁻⁵³, and a host's stopping limit for its residual must not be tighter than that.
+//
 // Δt = 0 is an elastic step. A trial state without deviator (hydrostatic strain) does not creep. A creep increment below
 // about 1e-278 of the elastic strain is taken as zero.
 //
