@@ -22,17 +22,17 @@ const bearable = 0.4
 // The bound is formed twice, from the law at the end of the step and from the law at the trial state, because the exponents
 // need not be the same everywhere.
 func (c *coupled) contracts(x *node, t *trialRates) bool {
-	return c.feedbackAtEnd(x) <= bearable && c.feedbackFromTrial(x, t) <= bearable
+	return c.feedbackAtEnd(x, t) <= bearable && c.feedbackFromTrial(x, t) <= bearable
 }
 
-func (c *coupled) feedbackAtEnd(x *node) float64 {
+func (c *coupled) feedbackAtEnd(x *node, t *trialRates) float64 {
 	feedback, slope := 0.0, 1.0
 	if c.creeps {
 		slope = x.jacobian[c.count][c.count]
 		if !(c.exponent(x, &x.rate.Creep) > 0 && slope > 0) {
 			return math.Inf(1)
 		}
-		feedback = math.Max(0, x.share*x.rate.Creep.ByLogStrain)
+		feedback = max(0, x.share*x.rate.Creep.ByLogStrain)
 	}
 	for i := range c.count {
 		perTime, perStrain := 0.0, 0.0
@@ -40,17 +40,17 @@ func (c *coupled) feedbackAtEnd(x *node) float64 {
 		byCreep := x.sensitivity[i] * x.increment[i]
 		if c.creeps {
 			byZ := -x.sensitivity[i] * x.jacobian[i][c.count] / slope
-			perTime = math.Max(0, byZ)
-			perStrain = math.Max(0, byCreep+byZ)
+			perTime = max(0, byZ)
+			perStrain = max(0, byCreep+byZ)
 			if excess > 0 { // this term changes its sign on the way: take its parts
-				perStrain = math.Abs(byCreep) * math.Max(1, excess)
+				perStrain = math.Abs(byCreep) * max(1, excess)
 			}
 		}
 		for j := range c.count {
 			a := x.jacobian[i][j]
 			if i == j {
-				perTime += math.Max(0, 1-a)
-				perStrain += math.Max(0, 1-a-byCreep)
+				perTime += max(0, 1-a)
+				perStrain += max(0, 1-a-byCreep)
 				continue
 			}
 			b := x.jacobian[j][i]
@@ -60,7 +60,12 @@ func (c *coupled) feedbackAtEnd(x *node) float64 {
 		if !c.creeps {
 			perStrain = perTime
 		}
-		feedback += math.Min(perTime, perStrain) * peak(x.fraction, x.odds, excess)
+		f := min(perTime, perStrain)
+		if more := peak(x.fraction, x.odds, excess); more > 1 && f > 0 {
+			// An exponent says nothing where a rate passes through zero: no more than what the trial state makes of it.
+			f *= min(more, max(1, c.scaleByStrain(x, t, i)/x.growth[i]))
+		}
+		feedback += f
 	}
 	return feedback
 }
@@ -86,7 +91,7 @@ func peak(fraction, odds, excess float64) float64 {
 // trialRates is what the law says at the trial state, kept to judge the solution by.
 type trialRates struct {
 	perTime     [creeplaw.MaxVariables]float64 // scale of the increments: Δt e^LogScale
-	perStrain   [creeplaw.MaxVariables]float64 // q/3G e^(LogScale - LogRate)
+	perStrain   [creeplaw.MaxVariables]float64 // the logarithm of the other: q/3G e^(LogScale - LogRate)
 	value       [creeplaw.MaxVariables]float64 // v̇ in that scale
 	by          [creeplaw.MaxVariables][creeplaw.MaxVariables]float64
 	excess      [creeplaw.MaxVariables]float64
@@ -105,9 +110,7 @@ func (c *coupled) keep(t *trialRates, x *node) {
 	for i := range c.count {
 		r := &x.rate.Internal[i]
 		t.perTime[i] = x.growth[i]
-		if c.creeps {
-			t.perStrain[i] = math.Exp(c.logElastic+r.LogScale-x.rate.LogRate) / m.unit[i]
-		}
+		t.perStrain[i] = c.logElastic + r.LogScale - x.rate.LogRate
 		t.value[i] = r.Value
 		t.excess[i] = c.excess(x, i)
 		t.sensitivity[i] = x.rate.Creep.ByInternal[i] * m.unit[i]
@@ -117,20 +120,33 @@ func (c *coupled) keep(t *trialRates, x *node) {
 	}
 }
 
-func (c *coupled) feedbackFromTrial(x *node, t *trialRates) (feedback float64) {
+// feedbackFromTrial takes the increments as no larger than they would be at the trial stress all the time, or, if that is too
+// much, than what the creep strain can make of them.
+func (c *coupled) feedbackFromTrial(x *node, t *trialRates) float64 {
+	softening := 0.0
 	if c.creeps {
 		if !(t.exponent > 0) {
 			return math.Inf(1)
 		}
-		feedback = math.Max(0, t.softening*x.fraction)
+		softening = max(0, t.softening*x.fraction)
 	}
-	var scale [creeplaw.MaxVariables]float64
+	scale := t.perTime
+	if f := softening + c.feedbackOf(&scale, t); f <= bearable || !c.creeps {
+		return f
+	}
 	for i := range c.count {
-		scale[i] = t.perTime[i]
-		if c.creeps {
-			scale[i] = math.Min(scale[i], t.perStrain[i]*x.fraction*crestUpTo(x.fraction, t.excess[i]))
-		}
+		scale[i] = min(scale[i], c.scaleByStrain(x, t, i))
 	}
+	return softening + c.feedbackOf(&scale, t)
+}
+
+// scaleByStrain is the largest scale of the increments of a variable that the creep strain can make at the trial state.
+func (c *coupled) scaleByStrain(x *node, t *trialRates, i int) float64 {
+	return math.Exp(t.perStrain[i]) / c.memory.unit[i] * x.fraction * crestUpTo(x.fraction, x.odds, t.excess[i])
+}
+
+// feedbackOf is the destabilising feedback at the trial state for increments of a scale.
+func (c *coupled) feedbackOf(scale *[creeplaw.MaxVariables]float64, t *trialRates) (feedback float64) {
 	for i := range c.count {
 		a := t.sensitivity[i]
 		increment := scale[i] * t.value[i]
@@ -138,14 +154,14 @@ func (c *coupled) feedbackFromTrial(x *node, t *trialRates) (feedback float64) {
 		if byCreep := a * increment; byCreep > 0 {
 			perStrain = byCreep
 		} else if c.creeps {
-			perTime = -byCreep * math.Max(0, 1+t.excess[i]/t.exponent)
-			perStrain = -byCreep * math.Max(0, t.excess[i])
+			perTime = -byCreep * max(0, 1+t.excess[i]/t.exponent)
+			perStrain = -byCreep * max(0, t.excess[i])
 		}
 		for j := range c.count {
 			own := scale[i] * t.by[i][j]
 			if i == j {
-				perTime += math.Max(0, own)
-				perStrain += math.Max(0, own-a*increment)
+				perTime += max(0, own)
+				perStrain += max(0, own-a*increment)
 				continue
 			}
 			back := scale[j] * t.by[j][i]
@@ -155,15 +171,18 @@ func (c *coupled) feedbackFromTrial(x *node, t *trialRates) (feedback float64) {
 		if !c.creeps {
 			perStrain = perTime
 		}
-		feedback += math.Min(perTime, perStrain)
+		feedback += min(perTime, perStrain)
 	}
 	return feedback
 }
 
-// crestUpTo is the largest value of u (1-u)^excess up to the fraction, over the fraction.
-func crestUpTo(fraction, excess float64) float64 {
-	if !(fraction*(1+excess) > 1) {
-		return 1 // at most
+// crestUpTo is the largest value of u (1-u)^excess up to the fraction, over the fraction, or more.
+func crestUpTo(fraction, odds, excess float64) float64 {
+	switch {
+	case excess < 0: // rising to the end
+		return math.Exp(-excess * math.Log1p(odds))
+	case !(fraction*(1+excess) > 1):
+		return 1
 	}
 	top := 1 / (1 + excess)
 	return top / fraction * math.Exp(excess*math.Log1p(-top))

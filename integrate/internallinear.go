@@ -66,7 +66,7 @@ func (w *dense) eliminate(n, width int) bool {
 	for i := range n {
 		largest := 0.0
 		for j := range n {
-			largest = math.Max(largest, math.Abs(w[i][j]))
+			largest = max(largest, math.Abs(w[i][j]))
 		}
 		if !(largest > 0 && largest <= math.MaxFloat64) {
 			return false

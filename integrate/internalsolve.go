@@ -23,19 +23,72 @@ func (c *coupled) solve(x *node) Code {
 	}
 	var t trialRates
 	c.keep(&t, x)
-	if c.guess(x) && c.newton(x, c.size(), exact) == fine && !c.atLimit(x) && c.contracts(x, &t) {
+	found := c.guess(x) && c.newton(x, c.size(), exact) == fine
+	if !found && c.creeps && c.relax(x) {
+		found = c.newton(x, c.size(), exact) == fine
+	}
+	if found && !c.atLimit(x) && c.contracts(x, &t) {
 		return 0
 	}
 	return c.walk(x)
 }
 
+// relax sets x nearer the solution where the guess was too far from it, as for an exponential of stress: it solves F alone with
+// the variables as they were, inside a bracket, and then lets the variables follow.
+func (c *coupled) relax(x *node) bool {
+	const enough, most = 0.1, 40
+	x.v, x.logTime = c.before, c.logTime
+	if !(x.odds > 0x1p-1000 && x.odds < 0x1p1000) {
+		x.odds = 1
+	}
+	low, high := 0.0, math.Inf(1)
+	for range most {
+		if c.evaluate(x) == undefined {
+			return false
+		}
+		f := x.residual[c.count]
+		switch {
+		case math.Abs(f) <= enough:
+			c.follow(x)
+			return true
+		case f < 0:
+			low = x.odds
+		case f > 0:
+			high = x.odds
+		default:
+			return false
+		}
+		next := advance(x.odds, -f/x.jacobian[c.count][c.count], low, high)
+		if !(next > 0 && next != x.odds) {
+			return false
+		}
+		x.odds = next
+	}
+	return false
+}
+
+// follow moves the variables by what their rates at x make of the step.
+func (c *coupled) follow(x *node) {
+	for i := range c.count {
+		increment := x.increment[i] / max(x.jacobian[i][i], 0.5)
+		if room := c.memory.limit[i] - x.v[i]; increment/room > 0.5 {
+			increment = 0.5 * room
+		}
+		if finite(increment) {
+			x.v[i] += increment
+		}
+	}
+}
+
 // guess sets x near the solution from the law at the trial state, as if it were a power law in stress. It reports false where
-// that leads nowhere.
+// that leads nowhere. What it only aims at is computed roughly.
 func (c *coupled) guess(x *node) bool {
 	logKept := 0.0
 	if c.creeps {
 		c.guessCreep(x)
-		logKept = -math.Log1p(x.odds)
+		if logKept = -doubleArtanh(x.odds / (2 + x.odds)); x.odds > 1 {
+			logKept = -math.Log1p(x.odds)
+		}
 	}
 	shift := 0.0
 	for i := range c.count {
@@ -44,12 +97,16 @@ func (c *coupled) guess(x *node) bool {
 		if increment == 0 {
 			continue
 		}
-		if n := c.exponent(x, &r.Partials) / r.Value; c.creeps && n != 0 {
-			increment = r.Value * math.Exp(c.logTime+r.LogScale+n*logKept) / c.memory.unit[i]
+		if c.creeps {
+			if fall := c.exponent(x, &r.Partials) / r.Value * logKept; fall > -0.5 {
+				increment *= exponential(fall)
+			} else {
+				increment = r.Value * math.Exp(c.logTime+r.LogScale+fall) / c.memory.unit[i]
+			}
 		}
 		// The variable's own feedback, to second order.
 		feedback := increment * r.ByInternal[i] * c.memory.unit[i] / r.Value
-		increment /= 1 - math.Min(feedback, 0.5)
+		increment /= 1 - min(feedback, 0.5)
 		if room := c.memory.limit[i] - x.v[i]; increment/room > 0.5 {
 			increment = 0.5 * room
 		}
@@ -61,8 +118,8 @@ func (c *coupled) guess(x *node) bool {
 	}
 	if c.creeps && shift != 0 {
 		u := x.odds / (1 + x.odds)
-		shift /= 1 - u + u*math.Max(x.rate.Creep.ByLogStress, 0)
-		x.odds *= math.Exp(math.Max(-1, math.Min(1, shift)))
+		shift /= 1 - u + u*max(x.rate.Creep.ByLogStress, 0)
+		x.odds *= exponential(max(-1, min(1, shift)))
 	}
 	return true
 }
@@ -76,7 +133,7 @@ func (c *coupled) guessCreep(x *node) {
 			level, slope = l, 1+hardening
 		}
 	}
-	x.odds = firstGuess(level, math.Max(c.exponent(x, l), 0)/slope)
+	x.odds = firstGuess(level, max(c.exponent(x, l), 0)/slope)
 }
 
 // effort is how far an iteration goes.
@@ -117,7 +174,7 @@ func (c *coupled) correct(x *node, held int, e effort) (v verdict, first float64
 			}
 		}
 		c.move(x, &d, c.leash(x, &d, size))
-		contraction := math.Min(1, relative/before)
+		contraction := min(1, relative/before)
 		x.rest = relative * contraction // the next correction would be smaller
 		switch {
 		case x.rest <= e.done && size < 4e-9+e.done:
@@ -155,22 +212,22 @@ func (c *coupled) measure(x *node, d *direction, increments bool) (size, rest fl
 	rest = math.Abs(d[c.size()])
 	grown := 0.0 // what the time alone adds to an increment, relative to it
 	if rest > 0 {
-		grown = math.Expm1(math.Min(rest, 700))
+		grown = math.Expm1(min(rest, 700))
 	}
 	for i := range c.count {
 		dv, weight := math.Abs(d[i]), c.weight(x, i)
 		if grown > 0 {
-			size = math.Max(size, grown*math.Abs(x.increment[i])*weight/math.Max(1, math.Abs(x.jacobian[i][i])))
+			size = max(size, grown*math.Abs(x.increment[i])*weight/max(1, math.Abs(x.jacobian[i][i])))
 		}
 		if dv == 0 {
 			continue
 		}
-		size = math.Max(size, dv*weight)
+		size = max(size, dv*weight)
 		if increments {
-			rest = math.Max(rest, dv/(math.Abs(x.increment[i])+1e-4*math.Abs(x.v[i])+negligibleIncrement))
+			rest = max(rest, dv/(math.Abs(x.increment[i])+1e-4*math.Abs(x.v[i])+negligibleIncrement))
 		}
 	}
-	return size, math.Max(size, rest)
+	return size, max(size, rest)
 }
 
 // negligibleIncrement is an increment of a variable over its unit that would not show after 1e6 steps.

@@ -118,18 +118,20 @@ type answer struct {
 
 // respond differentiates the solution by each of the nudges, implicitly. It reports false where the solution turns back.
 func (c *coupled) respond(x *node, nudges []nudge, answers []answer) bool {
+	if c.creeps && c.count == 1 {
+		return c.respond2(x, nudges, answers)
+	}
 	n := c.size()
 	var w dense
 	for i := range n {
 		copy(w[i][:n], x.jacobian[i][:n])
 	}
 	for k := range nudges {
-		d := &nudges[k]
 		for i := range c.count {
-			w[i][n+k] = d.before[i] + x.increment[i]*d.logTime + x.growth[i]*d.through(&x.rate.Internal[i].Partials)
+			w[i][n+k] = c.pushVariable(x, i, &nudges[k])
 		}
 		if c.creeps {
-			w[c.count][n+k] = d.through(&x.rate.Creep) + d.logTime - d.logElastic
+			w[c.count][n+k] = x.pushCreep(&nudges[k])
 		}
 	}
 	if n > 0 && !w.eliminate(n, n+len(nudges)) {
@@ -145,6 +147,30 @@ func (c *coupled) respond(x *node, nudges []nudge, answers []answer) bool {
 		}
 	}
 	return true
+}
+
+// respond2 is respond for one variable and creep.
+func (c *coupled) respond2(x *node, nudges []nudge, answers []answer) bool {
+	a, b := &x.jacobian[0], &x.jacobian[1]
+	det := a[0]*b[1] - a[1]*b[0]
+	if det == 0 || det-det != 0 {
+		return false
+	}
+	for k := range nudges {
+		r, f := c.pushVariable(x, 0, &nudges[k]), x.pushCreep(&nudges[k])
+		answers[k] = answer{z: (a[0]*f - b[0]*r) / det}
+		answers[k].v[0] = (r*b[1] - a[1]*f) / det
+	}
+	return true
+}
+
+// pushVariable and pushCreep are what a nudge does to the equations, on their right-hand side.
+func (c *coupled) pushVariable(x *node, i int, d *nudge) float64 {
+	return d.before[i] + x.increment[i]*d.logTime + x.growth[i]*d.through(&x.rate.Internal[i].Partials)
+}
+
+func (x *node) pushCreep(d *nudge) float64 {
+	return d.through(&x.rate.Creep) + d.logTime - d.logElastic
 }
 
 // The data a solution depends on, each as a nudge of 1.
@@ -175,13 +201,25 @@ func (c *coupled) byTemperature(x *node, t *trial) nudge {
 
 func (t *trial) meanByTemperature() float64 { return t.bulkByT*t.volumetric - 3*t.bulk*t.expansion }
 
+// feelsMean reports whether any rate depends on the mean stress here.
+func (c *coupled) feelsMean(x *node) bool {
+	for i := range c.count {
+		if x.rate.Internal[i].ByMeanStress != 0 {
+			return true
+		}
+	}
+	return x.rate.Creep.ByMeanStress != 0
+}
+
 // writeInternal fills the result. Everything read from old has been read before its first line, so old may be &out.State.
 func (m *Material) writeInternal(out *Result, old *State, inc *Increment, t *trial, c *coupled, x *node) {
 	nudges := [4]nudge{c.byTrial(x), c.byTemperature(x, t), c.byMean(), c.byPrincipal(x)}
 	var answers [4]answer
 	count := 4
 	if !m.memory.seesPrincipal {
-		count = 3
+		if count = 3; !c.feelsMean(x) {
+			count = 2
+		}
 	}
 	if x.fraction > 0 && !c.respond(x, nudges[:count], answers[:count]) {
 		answers = [4]answer{}

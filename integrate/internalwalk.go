@@ -82,7 +82,7 @@ func (w *walker) begin() Code {
 	if w.evaluate(x) == undefined {
 		return LawUndefined
 	}
-	shrink := math.Min(w.startShrink(x), 0.5)
+	shrink := min(w.startShrink(x), 0.5)
 	for range mostStarts {
 		switch w.beginAt(shrink) {
 		case fine:
@@ -147,7 +147,7 @@ func (w *walker) startShrink(x *node) float64 {
 	most := math.Inf(-1) // ln of the change of the rates per fraction relaxed, or per step
 	raise := func(factor, log float64) {
 		if factor != 0 {
-			most = math.Max(most, math.Log(math.Abs(factor))+log)
+			most = max(most, math.Log(math.Abs(factor))+log)
 		}
 	}
 	base := w.target // of increments per step
@@ -189,10 +189,10 @@ func (w *walker) normalise(d *direction) {
 func (w *walker) reach(x *node, d *direction) float64 {
 	most := timeWeight * math.Abs(d[w.size()])
 	if w.creeps {
-		most = math.Max(most, math.Abs(d[w.count]))
+		most = max(most, math.Abs(d[w.count]))
 	}
 	for i := range w.count {
-		most = math.Max(most, math.Abs(d[i])*w.weight(x, i))
+		most = max(most, math.Abs(d[i])*w.weight(x, i))
 	}
 	return most
 }
@@ -225,7 +225,7 @@ func (w *walker) arrive(rest float64) progress {
 		w.at = y
 		return arrived
 	}
-	w.length = math.Min(w.length, length) / 2
+	w.length = min(w.length, length) / 2
 	return onTheWay
 }
 
@@ -293,7 +293,7 @@ func (w *walker) bends(y *node, along *direction, length float64) bool {
 // softens reports whether the softening by the creep strain, which no coordinate stands for, has changed much from here to y.
 func (w *walker) softens(y *node) bool {
 	before, after := w.at.share*w.at.rate.Creep.ByLogStrain, y.share*y.rate.Creep.ByLogStrain
-	return math.Abs(after-before) > 0.3*(1+math.Abs(before)) && math.Max(before, after) > 0
+	return math.Abs(after-before) > 0.3*(1+math.Abs(before)) && max(before, after) > 0
 }
 
 // roundCorner gets past a corner of the curve, as where the rupture stress passes through zero and damage stops: a small
@@ -333,7 +333,7 @@ func (w *walker) accept(y *node, along *direction, length, first float64) progre
 	switch {
 	case along[n] <= 0:
 		top := crest(w.at.logTime, y.logTime, w.along[n]*length, along[n]*length)
-		doubt := (top - math.Max(w.at.logTime, y.logTime)) + 4*epsilon*math.Abs(top)
+		doubt := (top - max(w.at.logTime, y.logTime)) + 4*epsilon*math.Abs(top)
 		if length < 1e-6 || !w.locate && top+doubt < w.target {
 			w.end = top
 			return ended
@@ -351,7 +351,7 @@ func (w *walker) accept(y *node, along *direction, length, first float64) progre
 		return onTheWay
 	}
 	w.at, w.along = *y, *along
-	w.length = length * math.Min(longestStretch, math.Sqrt(bearableError/math.Max(first, 1e-6)))
+	w.length = length * min(longestStretch, math.Sqrt(bearableError/max(first, 1e-6)))
 	return onTheWay
 }
 
@@ -430,5 +430,5 @@ func crest(a, b, da, db float64) float64 {
 			s = 1
 		}
 	}
-	return math.Max(math.Max(a, b), a+s*(da+s*(c2+s*c3)))
+	return max(max(a, b), a+s*(da+s*(c2+s*c3)))
 }
