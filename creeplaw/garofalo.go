@@ -42,15 +42,31 @@ func (g Garofalo) LogRate(p Point) LogRate {
 	case x > sinhSaturation:
 		return LogRate{Value: g.logPrefactor + g.exponent*(x-math.Ln2), ByLogStress: g.exponent * x}
 	case x > 0:
-		e := -math.Expm1(-2 * x) // sinh x = e^x·e/2
+		e, logE := oneMinusExp(2 * x) // sinh x = e^x·e/2
 		return LogRate{
-			Value:       g.logPrefactor + g.exponent*(x-math.Ln2+math.Log(e)),
+			Value:       g.logPrefactor + g.exponent*(x-math.Ln2+logE),
 			ByLogStress: g.exponent * x * (2 - e) / e,
 		}
 	case x == 0:
 		return LogRate{Value: math.Inf(-1), ByLogStress: g.exponent}
 	}
 	return undefinedLog()
+}
+
+// oneMinusExp is 1 - e^-y and its logarithm for y > 0, to rounding.
+func oneMinusExp(y float64) (value, logarithm float64) {
+	switch {
+	case y < 0.7: // where the difference would lose digits
+		value = -math.Expm1(-y)
+		return value, math.Log(value)
+	case y < 2:
+		value = 1 - math.Exp(-y)
+		return value, math.Log(value)
+	}
+	small := math.Exp(-y)
+	t := small / (2 - small) // ln(1-small) = -2 artanh t, |t| < 0.073
+	s := t * t
+	return 1 - small, -2 * t * (1 + s*(1.0/3+s*(1.0/5+s*(1.0/7+s*(1.0/9+s*(1.0/11+s*(1.0/13)))))))
 }
 
 // Rate returns ṗ and its derivative by stress, A n B sinhⁿ⁻¹(Bσ) cosh(Bσ).

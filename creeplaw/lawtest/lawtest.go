@@ -153,7 +153,7 @@ func (b Box) complete() (Box, error) {
 	}
 	for i, r := range b.Internal {
 		if !(r[0] < r[1]) || math.IsInf(r[1]-r[0], 1) {
-			return b, fmt.Errorf("Internal %d is from %v to %v, must rise between finite numbers", i, r[0], r[1])
+			return b, fmt.Errorf("the range of Internal %d is from %v to %v, must rise between finite numbers", i, r[0], r[1])
 		}
 	}
 	if !(b.DerivativeTolerance > 0 && b.DerivativeTolerance <= 1e-2) {
