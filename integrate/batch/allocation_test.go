@@ -11,8 +11,9 @@ import (
 	"example.com/holdtime/tensor"
 )
 
-// TestBytesDoNotGrow: what a call allocates does not depend on the number of points and is within bound. With failures and
-// several workers it varies, because it depends on which of them meet any; the bound holds all the same.
+// TestBytesDoNotGrow: what a call allocates does not depend on the number of points: to the byte for one worker, and within the
+// same bound, which a number for each point would exceed, for several. There it varies from call to call, because the runtime may
+// make a goroutine anew, and with which workers meet failures.
 func TestBytesDoNotGrow(t *testing.T) {
 	h := newPlant(t, "xx yy zz xy yz xz", tensor.EngineeringShear)
 	spoiled := h.outputs(h.draw(10000), true)
@@ -28,18 +29,19 @@ func TestBytesDoNotGrow(t *testing.T) {
 				failures := b.Step(context.Background(), p) != nil
 				t.Logf("%d workers, derivatives %v, failures %v: {bytes count} %v for 1000 points, %v for 10000", workers, derivatives,
 					failures, few, many)
-				if workers == 1 || !failures {
+				if workers == 1 {
 					require.Equal(t, few, many)
 				}
-				require.LessOrEqual(t, many.bytes, bound(workers, failures))
+				require.LessOrEqual(t, max(few.bytes, many.bytes), bound(workers, failures))
 			}
 		}
 	}
 }
 
-// bound is a few hundred bytes for each worker; with failures, for each and for the report 256 counts and a list of 16.
+// bound is a few hundred bytes for each worker and as much for its goroutine; with failures, for each worker and for the report
+// 256 counts and a list of 16.
 func bound(workers int, failures bool) uint64 {
-	most := 400 * workers
+	most := 900 * workers
 	if failures {
 		most += (workers + 1) * (256*8 + 2*16*16)
 	}
