@@ -30,5 +30,6 @@
 //
 // Step works in the goroutine that calls it and starts others for the other workers, which have ended when it returns. It
 // allocates a few hundred bytes for each worker, the list of failures if there are any, and nothing for a point. A panic in a
-// user's own law stops the call and comes out of Step.
+// user's own law stops the call and comes out of Step, in the goroutine of the caller, as an error that wraps the law's and tells
+// its stack.
 package batch

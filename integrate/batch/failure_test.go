@@ -4,6 +4,8 @@ import (
 	"context"
 	"errors"
 	"math"
+	"runtime"
+	"sync"
 	"sync/atomic"
 	"testing"
 
@@ -193,6 +195,49 @@ func TestWorkersPanic(t *testing.T) {
 			_ = b.Step(context.Background(), p)
 			t.Error("no panic")
 		}()
+	}
+}
+
+// TestWorkersEnded: a law that ends its goroutine does not make Step take the points left behind for done. Step does not
+// return, by whichever goroutine was ended.
+func TestWorkersEnded(t *testing.T) {
+	h := newPlant(t, "xx yy zz xy yz xz", tensor.EngineeringShear)
+	p := h.outputs(h.draw(2000), true)
+	p.Material = nil
+	for range 5 {
+		h.watch(t, func(asked int64) {
+			if asked == 1000 {
+				runtime.Goexit()
+			}
+		})
+		b := h.batch(t, batch.Options{Workers: 4})
+		returned := false
+		var wait sync.WaitGroup
+		wait.Go(func() {
+			defer func() { _ = recover() }()
+			_ = b.Step(context.Background(), p)
+			returned = true
+		})
+		wait.Wait()
+		require.False(t, returned)
+	}
+}
+
+// TestWorkersShareBatch: one batch serves several calls at the same time.
+func TestWorkersShareBatch(t *testing.T) {
+	h := newPlant(t, "xx yy zz xy", tensor.EngineeringShear)
+	b := h.batch(t, batch.Options{Workers: 3})
+	want := h.outputs(h.draw(1000), true)
+	h.loop(want)
+	got := make([]batch.Points, 5)
+	var wait sync.WaitGroup
+	for i := range got {
+		got[i] = h.outputs(want, true)
+		wait.Go(func() { _ = b.Step(context.Background(), got[i]) })
+	}
+	wait.Wait()
+	for i := range got {
+		requireBits(t, want, got[i], "calls at the same time")
 	}
 }
 
