@@ -46,7 +46,8 @@ type MixedResult struct {
 //
 // The error is nil or a Code; then out is untouched. old is never written, but may be &out.State. A prescribed stress so high
 // that no finite creep strain satisfies the law gives LawUndefined; a softening law that has no solution connected to a
-// vanishing step, as when the prescribed stress ruptures it, gives BeyondRupture.
+// vanishing step, as when the prescribed stress ruptures it, gives BeyondRupture. So does a law with internal variables where
+// Step refuses the strain at the end.
 func (m *Material) StepMixed(out *MixedResult, old *State, inc MixedIncrement) error {
 	if code := m.stepMixed(out, old, &inc, m.evolves()); code != 0 {
 		return code
@@ -96,12 +97,12 @@ func (m *Material) stepMixed(out *MixedResult, old *State, inc *MixedIncrement, 
 
 // stepMixedEvolving is stepMixed for a law with internal variables, which only Step knows how to carry.
 func (m *Material) stepMixedEvolving(out *MixedResult, old *State, inc *MixedIncrement, p *mixedPoint, x *flowed) Code {
-	var b bridged
-	if code := b.solve(m, p, x, old, inc); code != 0 {
+	b := bridge{point: *p, x: *x, old: *old, inc: *inc}
+	if code := b.solve(m); code != 0 {
 		return code
 	}
-	out.write(old, &b.step.State, inc, p, x)
-	out.derive(inc, p, x, sensitivity{bridge: &b})
+	out.write(&b.old, &b.step.State, inc, &b.point, &b.x)
+	out.derive(inc, &b.point, &b.x, sensitivity{bridge: &b.bridged})
 	return 0
 }
 

@@ -13,7 +13,9 @@ import (
 //	Φ(z) = ln ω - ln(3GΔp/σₑ of Step),   z = ln ω
 //
 // Φ is negative while Step creeps more than the mixed control left room for. The search comes from there, so that it meets the
-// solution that is connected to Δt → 0 first; where Φ turns down before it is zero, no such solution exists.
+// first solution first. Where Φ turns down before it is zero that may be rupture, or only the strain that Step is asked at;
+// then the solution is followed from a short time (see follow). Step itself may refuse a strain that all at once, from the
+// start of the step, would rupture the material: such a step is beyond rupture here too, and a shorter one is not.
 type bridged struct {
 	step  Result
 	mises float64 // σₑ of step
@@ -24,10 +26,34 @@ type bridged struct {
 	slope float64 // dΦ/dz
 }
 
-// solve finds the solution, leaving the end state in p and x.
-func (b *bridged) solve(m *Material, p *mixedPoint, x *flowed, old *State, inc *MixedIncrement) Code {
-	const most = 200
-	if code := b.evaluate(m, p, x, old, inc, 0); code != 0 {
+// bridge is a bridged problem with its data, all of them values, which keeps them off the heap.
+type bridge struct {
+	bridged
+	point mixedPoint
+	x     flowed
+	old   State
+	inc   MixedIncrement
+	asked int // how often Step was
+}
+
+const (
+	bridgeMost  = 200  // of Step in one search
+	bridgeNoise = 1e-9 // what Step may leave in ln Δp where damage is far advanced
+)
+
+// solve finds the solution that is connected to Δt → 0, leaving the end state in the point and x.
+func (b *bridge) solve(m *Material) Code {
+	code := b.search(m)
+	if code == BeyondRupture || code == NoConvergence {
+		code = b.follow(m, code)
+	}
+	b.x.iterations = b.asked
+	return code
+}
+
+// search looks for the first root of Φ.
+func (b *bridge) search(m *Material) Code {
+	if code := b.evaluate(m, 0); code != 0 {
 		return code
 	}
 	if b.odds == 0 {
@@ -35,9 +61,8 @@ func (b *bridged) solve(m *Material, p *mixedPoint, x *flowed, old *State, inc *
 	}
 	z := math.Log(b.odds) // what creeps away at the strain of the elastic step: not above the solution
 	low, high, stride := math.Inf(-1), math.Inf(1), 1.0
-	for x.iterations = 1; x.iterations < most; x.iterations++ {
-		code := b.evaluate(m, p, x, old, inc, math.Exp(z))
-		if code != 0 || b.odds == 0 {
+	for range bridgeMost {
+		if code := b.evaluate(m, math.Exp(z)); code != 0 || b.odds == 0 {
 			if code == 0 {
 				code = NoConvergence
 			}
@@ -48,26 +73,22 @@ func (b *bridged) solve(m *Material, p *mixedPoint, x *flowed, old *State, inc *
 			z = low + stride
 			continue
 		}
-		size := math.Abs(b.phi)
-		step := -b.phi / b.slope
 		switch {
 		case b.phi <= 0 && !(b.slope > 0):
 			return BeyondRupture
-		case b.slope > 0 && (size <= 16*epsilon*(1+math.Abs(z)) || math.Abs(step) <= 1e-13*(1+math.Abs(z))):
-			x.residual = size
+		case b.done(z):
 			return 0
 		case b.phi < 0:
 			low = z
 		default:
 			high = z
 		}
-		next := z + math.Max(-stride, math.Min(stride, step))
+		next := z + math.Max(-stride, math.Min(stride, -b.phi/b.slope))
 		if !(b.slope > 0) || !(next > low && next < high) {
 			next = (math.Max(low, z-stride) + math.Min(high, z+stride)) / 2
 		}
-		if next == z || next == low || next == high {
-			x.residual = size
-			if b.slope > 0 && size <= 1e-11 {
+		if next == z || next == low || next == high || high-low <= 1e-13*(1+math.Abs(z)) {
+			if b.slope > 0 && math.Abs(b.phi) <= bridgeNoise {
 				return 0
 			}
 			return NoConvergence
@@ -77,12 +98,93 @@ func (b *bridged) solve(m *Material, p *mixedPoint, x *flowed, old *State, inc *
 	return NoConvergence
 }
 
+// done notes the residual and reports whether z is the root as well as numbers can say.
+func (b *bridge) done(z float64) bool {
+	size := math.Abs(b.phi)
+	b.x.residual = size
+	return b.slope > 0 && (size <= 16*epsilon*(1+math.Abs(z)) || size <= 1e-13*(1+math.Abs(z))*b.slope)
+}
+
+// follow finds the solution of a short time and follows it to the end of the step, each time from the one before. Where that
+// cannot go on, by however little, the solution ends: it returns BeyondRupture.
+func (b *bridge) follow(m *Material, code Code) Code {
+	const (
+		cuts     = 20   // by 4 each
+		shortest = 1e-7 // relative change of the time
+		most     = 400  // times
+	)
+	dt := b.inc.Dt
+	for k := 1; ; k++ {
+		if k > cuts {
+			b.inc.Dt = dt
+			return code
+		}
+		b.inc.Dt = dt * math.Ldexp(1, -2*k)
+		if b.search(m) == 0 {
+			break
+		}
+	}
+	if b.odds == 0 { // no creep yet: nothing to follow
+		b.inc.Dt = dt
+		return code
+	}
+	z, now, end := math.Log(b.odds), math.Log(b.inc.Dt), math.Log(dt)
+	stride, rise := math.Ln2, 1.0 // of ln Δt, and dz/d ln Δt
+	for range most {
+		next := math.Min(now+stride, end)
+		b.inc.Dt = math.Exp(next)
+		if next == end {
+			b.inc.Dt = dt
+		}
+		at, ok := b.correct(m, z+rise*(next-now), 1)
+		switch {
+		case ok && next == end:
+			return 0
+		case ok:
+			rise = (at - z) / (next - now)
+			z, now, stride = at, next, stride*1.5
+		case stride < shortest:
+			b.inc.Dt = dt
+			return BeyondRupture
+		default:
+			stride, rise = stride/4, rise/2
+		}
+	}
+	b.inc.Dt = dt
+	return NoConvergence
+}
+
+// correct runs Newton's iteration from z, and gives up where it leads away by more than reach or does not settle.
+func (b *bridge) correct(m *Material, z, reach float64) (float64, bool) {
+	from, last := z, math.Inf(1)
+	for range 20 {
+		if b.evaluate(m, math.Exp(z)) != 0 || b.odds == 0 || !(b.slope > 0) {
+			return z, false
+		}
+		if b.done(z) {
+			return z, true
+		}
+		step := -b.phi / b.slope
+		if math.Abs(b.phi) <= bridgeNoise && math.Abs(step) >= last/2 { // as far as Step goes
+			return z, true
+		}
+		last = math.Abs(step)
+		z += step
+		if !(math.Abs(z-from) <= reach) {
+			return z, false
+		}
+	}
+	return z, false
+}
+
 // evaluate carries Step to the strain of the mixed control at ω.
-func (b *bridged) evaluate(m *Material, p *mixedPoint, x *flowed, old *State, inc *MixedIncrement, odds float64) Code {
+func (b *bridge) evaluate(m *Material, odds float64) Code {
+	p, x, inc := &b.point, &b.x, &b.inc
+	b.asked++
 	x.odds = odds
 	p.end(x)
-	full := Increment{Dt: inc.Dt, Strain: p.strain(inc, old, odds), Temperature: inc.Temperature}
-	if code := m.step(&b.step, old, &full); code != 0 {
+	full := Increment{Dt: inc.Dt, Strain: p.strain(inc, &b.old, odds), Temperature: inc.Temperature}
+	if code := m.step(&b.step, &b.old, &full); code != 0 {
 		return code
 	}
 	x.stress = math.Sqrt(1.5 * p.deviator.Dot(p.deviator))
