@@ -35,11 +35,11 @@ var (
 	_ ParametricCoefficient = RateOf{}
 )
 
-func above0(name string, value float64, unit creeplaw.Dimension) creeplaw.Parameter {
+func positiveNumber(name string, value float64, unit creeplaw.Dimension) creeplaw.Parameter {
 	return creeplaw.Parameter{Name: name, Value: value, High: math.Inf(1), Dimension: unit}
 }
 
-func any0(name string, value float64, unit creeplaw.Dimension) creeplaw.Parameter {
+func anyNumber(name string, value float64, unit creeplaw.Dimension) creeplaw.Parameter {
 	return creeplaw.Parameter{Name: name, Value: value, Low: math.Inf(-1), High: math.Inf(1), Dimension: unit}
 }
 
@@ -80,7 +80,7 @@ func wrongNumber(kind string, n int) error {
 
 // Parameters returns the constant.
 func (c Constant) Parameters(unit creeplaw.Dimension) []creeplaw.Parameter {
-	return []creeplaw.Parameter{above0("constant", float64(c), unit)}
+	return []creeplaw.Parameter{positiveNumber("constant", float64(c), unit)}
 }
 
 // WithParameters returns another constant.
@@ -90,8 +90,8 @@ func (c Constant) WithParameters(values []float64) (Coefficient, error) {
 
 // Parameters returns prefactor and exponent.
 func (c Power) Parameters(unit creeplaw.Dimension) []creeplaw.Parameter {
-	return []creeplaw.Parameter{above0("prefactor", c.Prefactor, raised(unit, -c.Exponent, 0)),
-		above0("exponent", c.Exponent, dimensionless)}
+	return []creeplaw.Parameter{positiveNumber("prefactor", c.Prefactor, raised(unit, -c.Exponent, 0)),
+		positiveNumber("exponent", c.Exponent, dimensionless)}
 }
 
 // WithParameters returns another power.
@@ -101,8 +101,8 @@ func (c Power) WithParameters(values []float64) (Coefficient, error) {
 
 // Parameters returns value, stress and exponent.
 func (c PowerAt) Parameters(unit creeplaw.Dimension) []creeplaw.Parameter {
-	return []creeplaw.Parameter{above0("value", c.Value, unit), above0("stress", c.Stress, inStress),
-		above0("exponent", c.Exponent, dimensionless)}
+	return []creeplaw.Parameter{positiveNumber("value", c.Value, unit), positiveNumber("stress", c.Stress, inStress),
+		positiveNumber("exponent", c.Exponent, dimensionless)}
 }
 
 // WithParameters returns another power.
@@ -112,8 +112,8 @@ func (c PowerAt) WithParameters(values []float64) (Coefficient, error) {
 
 // Parameters returns prefactor and exponent.
 func (c InversePower) Parameters(unit creeplaw.Dimension) []creeplaw.Parameter {
-	return []creeplaw.Parameter{above0("prefactor", c.Prefactor, raised(unit, c.Exponent, 0)),
-		above0("exponent", c.Exponent, dimensionless)}
+	return []creeplaw.Parameter{positiveNumber("prefactor", c.Prefactor, raised(unit, c.Exponent, 0)),
+		positiveNumber("exponent", c.Exponent, dimensionless)}
 }
 
 // WithParameters returns another inverse power.
@@ -123,8 +123,8 @@ func (c InversePower) WithParameters(values []float64) (Coefficient, error) {
 
 // Parameters returns prefactor, stress coefficient and exponent.
 func (c Sinh) Parameters(unit creeplaw.Dimension) []creeplaw.Parameter {
-	return []creeplaw.Parameter{above0("prefactor", c.Prefactor, unit),
-		above0("stress coefficient", c.StressCoefficient, perStress), above0("exponent", c.Exponent, dimensionless)}
+	return []creeplaw.Parameter{positiveNumber("prefactor", c.Prefactor, unit),
+		positiveNumber("stress coefficient", c.StressCoefficient, perStress), positiveNumber("exponent", c.Exponent, dimensionless)}
 }
 
 // WithParameters returns another hyperbolic sine.
@@ -134,8 +134,8 @@ func (c Sinh) WithParameters(values []float64) (Coefficient, error) {
 
 // Parameters returns prefactor and stress coefficient.
 func (c Exponential) Parameters(unit creeplaw.Dimension) []creeplaw.Parameter {
-	return []creeplaw.Parameter{above0("prefactor", c.Prefactor, unit),
-		any0("stress coefficient", c.StressCoefficient, perStress)}
+	return []creeplaw.Parameter{positiveNumber("prefactor", c.Prefactor, unit),
+		anyNumber("stress coefficient", c.StressCoefficient, perStress)}
 }
 
 // WithParameters returns another exponential.
@@ -145,8 +145,8 @@ func (c Exponential) WithParameters(values []float64) (Coefficient, error) {
 
 // Parameters returns prefactor and stress coefficient.
 func (c Soderberg) Parameters(unit creeplaw.Dimension) []creeplaw.Parameter {
-	return []creeplaw.Parameter{above0("prefactor", c.Prefactor, unit),
-		above0("stress coefficient", c.StressCoefficient, perStress)}
+	return []creeplaw.Parameter{positiveNumber("prefactor", c.Prefactor, unit),
+		positiveNumber("stress coefficient", c.StressCoefficient, perStress)}
 }
 
 // WithParameters returns another function of this form.
@@ -156,11 +156,11 @@ func (c Soderberg) WithParameters(values []float64) (Coefficient, error) {
 
 // Parameters returns a, b, c and d under the names the errors of their constructors give them.
 func (c LogBilinear) Parameters(unit creeplaw.Dimension) []creeplaw.Parameter {
-	intercept := any0("intercept", c.Intercept, unit)
+	intercept := anyNumber("intercept", c.Intercept, unit)
 	intercept.Scale = creeplaw.LogarithmOf
-	return []creeplaw.Parameter{intercept, any0("coefficient of stress", c.ByStress, perStress),
-		any0("coefficient of temperature", c.ByTemperature, raised(dimensionless, 0, -1)),
-		any0("coefficient of the product", c.ByProduct, raised(dimensionless, -1, -1))}
+	return []creeplaw.Parameter{intercept, anyNumber("coefficient of stress", c.ByStress, perStress),
+		anyNumber("coefficient of temperature", c.ByTemperature, raised(dimensionless, 0, -1)),
+		anyNumber("coefficient of the product", c.ByProduct, raised(dimensionless, -1, -1))}
 }
 
 // WithParameters returns another function of this form.
@@ -180,7 +180,7 @@ func (c Activated) Parameters(unit creeplaw.Dimension) []creeplaw.Parameter {
 
 // WithParameters rebuilds both.
 func (c Activated) WithParameters(values []float64) (Coefficient, error) {
-	r := rebuilding{"activated coefficient", values, nil}
+	r := rebuilding{whole: "activated coefficient", rest: values}
 	c.Coefficient = r.coefficient("coefficient", c.Coefficient)
 	if f, ok := c.Factor.(creeplaw.ParametricFactor); ok {
 		values := r.take(len(f.Parameters()))
@@ -223,7 +223,7 @@ func (c Product) Parameters(unit creeplaw.Dimension) []creeplaw.Parameter {
 
 // WithParameters rebuilds the factors.
 func (c Product) WithParameters(values []float64) (Coefficient, error) {
-	r := rebuilding{"product of coefficients", values, nil}
+	r := rebuilding{whole: "product of coefficients", rest: values}
 	other := make(Product, len(c))
 	for i, factor := range c {
 		other[i] = r.coefficient(fmt.Sprintf("factor %d", i+1), factor)
@@ -277,7 +277,7 @@ func (c RateOf) Parameters(unit creeplaw.Dimension) []creeplaw.Parameter {
 
 // WithParameters rebuilds the law.
 func (c RateOf) WithParameters(values []float64) (Coefficient, error) {
-	r := rebuilding{"rate of a law", values, nil}
+	r := rebuilding{whole: "rate of a law", rest: values}
 	if law, ok := c.Law.(creeplaw.Parametric); ok {
 		other, err := law.WithParameters(r.take(len(law.Parameters())))
 		r.fail("law", err)
@@ -302,9 +302,10 @@ func prefixed(part string, all []creeplaw.Parameter) []creeplaw.Parameter {
 
 // rebuilding hands values to the parts of a whole, and keeps the first error.
 type rebuilding struct {
-	whole string
-	rest  []float64
-	err   error
+	whole  string
+	rest   []float64
+	err    error
+	prefix string // of the names of parts, for a part of many parts
 }
 
 func (r *rebuilding) take(n int) []float64 {
@@ -337,7 +338,7 @@ func (r *rebuilding) fail(part string, err error) {
 		return
 	}
 	if r.err = err; part != "" {
-		r.err = within(r.whole, part, err)
+		r.err = within(r.whole, r.prefix+part, err)
 	}
 }
 

@@ -20,6 +20,7 @@ import (
 type Findley struct {
 	sum
 	instantaneous prepared // nil for none
+	given         *FindleyParameters
 }
 
 var _ Logarithmic = Findley{}
@@ -48,7 +49,7 @@ func NewFindley(p FindleyParameters) (Findley, error) {
 	if err != nil {
 		return Findley{}, err
 	}
-	f := Findley{sum: s}
+	f := Findley{sum: s, given: &p}
 	if p.Instantaneous != 0 || p.InstantaneousStress != 0 {
 		const name = "instantaneous strain"
 		if err := positive("stress", p.InstantaneousStress); err != nil {

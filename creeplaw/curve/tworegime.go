@@ -27,7 +27,11 @@ type TwoRegime struct {
 	primary, steady, end prepared // end is nil where the rates match
 	exponent             float64
 	first                sum // the primary stage alone
+	given                *regimesGiven
 }
+
+// regimesGiven are the coefficients as they were given; no end where the rates match.
+type regimesGiven struct{ primary, end, steady Coefficient }
 
 var (
 	_ Logarithmic = TwoRegime{}
@@ -41,7 +45,7 @@ func NewTwoRegime(primary Coefficient, timeExponent float64, endOfPrimary, stead
 	if err != nil {
 		return TwoRegime{}, err
 	}
-	return newTwoRegime(primary, timeExponent, end, steadyRate)
+	return newTwoRegime(timeExponent, end, &regimesGiven{primary, endOfPrimary, steadyRate})
 }
 
 // NewMatchedTwoRegime builds the curve without a jump of the rate, t_fp = (m c/ṡ)^(1/(1-m)), from c [time⁻ᵐ], 0 < m < 1 and
@@ -51,24 +55,24 @@ func NewMatchedTwoRegime(primary Coefficient, timeExponent float64, steadyRate C
 		return TwoRegime{}, &creeplaw.ParameterError{Law: twoRegime, Parameter: "time exponent", Value: 1,
 			Want: "below 1 for rates to match"}
 	}
-	return newTwoRegime(primary, timeExponent, nil, steadyRate)
+	return newTwoRegime(timeExponent, nil, &regimesGiven{primary, nil, steadyRate})
 }
 
 const twoRegime = "two-regime curve"
 
-func newTwoRegime(primary Coefficient, timeExponent float64, end prepared, steadyRate Coefficient) (TwoRegime, error) {
-	c := TwoRegime{end: end, exponent: timeExponent}
+func newTwoRegime(timeExponent float64, end prepared, given *regimesGiven) (TwoRegime, error) {
+	c := TwoRegime{end: end, exponent: timeExponent, given: given}
 	err := atMostOne(twoRegime, timeExponent)
 	if err == nil {
-		c.first, err = newSum(twoRegime, part{PowerOfTime(primary, timeExponent), "primary coefficient", ""})
+		c.first, err = newSum(twoRegime, part{PowerOfTime(given.primary, timeExponent), "primary coefficient", ""})
 	}
 	if err == nil {
-		c.steady, err = prepare(twoRegime, "steady rate", steadyRate)
+		c.steady, err = prepare(twoRegime, "steady rate", given.steady)
 	}
 	if err != nil {
 		return TwoRegime{}, err
 	}
-	c.primary, err = prepare(twoRegime, "primary coefficient", primary)
+	c.primary, err = prepare(twoRegime, "primary coefficient", given.primary)
 	return c, err
 }
 
