@@ -353,7 +353,8 @@ func (f *follower) judge(h float64) float64 {
 	for v := range count {
 		const floor = 0.1 // of the variable's unit: the way to its limit, or its initial value
 		scale := math.Max(math.Abs(f.end.Internal[v]), floor*f.material.memory.unit[v])
-		worst = math.Max(worst, math.Abs(e.internal[v])/scale)
+		part := math.Abs(f.end.Internal[v]-f.state.Internal[v])/scale + time
+		worst = math.Max(worst, math.Abs(e.internal[v])/(scale*math.Pow(math.Min(1, part), sharing)))
 	}
 	return worst / f.tolerance.Relative
 }

@@ -278,8 +278,10 @@ func (w *walker) judge(h float64, end *point) (float64, error) {
 			unit = math.Max(math.Abs(v.Initial), 1)
 		}
 		const floor = 0.1
+		scale := math.Max(math.Abs(end.state.Internal[i]), floor*unit)
+		part := math.Abs(end.state.Internal[i]-w.now.state.Internal[i])/scale + time
 		worst = math.Max(worst, math.Abs(end.state.Internal[i]-other.state.Internal[i])/
-			math.Max(math.Abs(end.state.Internal[i]), floor*unit))
+			(scale*math.Pow(math.Min(1, part), sharing)))
 	}
 	return worst / w.tolerance.Relative, nil
 }
