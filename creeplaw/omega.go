@@ -84,7 +84,7 @@ func NewOmegaFromPolynomials(p OmegaPolynomials) (Omega, error) {
 			return Omega{}, &ParameterError{omegaName, "highest " + r.name, r.in[1], "above the lowest"}
 		}
 	}
-	w := &omegaPolynomials{rate: p.Rate, acceleration: p.Acceleration, temperature: p.Temperature,
+	w := &omegaPolynomials{given: p, rate: p.Rate, acceleration: p.Acceleration, temperature: p.Temperature,
 		low: math.Log10(p.Stress[0]), high: math.Log10(p.Stress[1])}
 	for _, t := range p.Temperature {
 		for _, s := range []float64{w.low, w.high} {
@@ -149,6 +149,7 @@ type omegaPolynomials struct {
 	rate, acceleration [5]float64
 	low, high          float64 // log10 of the range of stress
 	temperature        [2]float64
+	given              OmegaPolynomials
 }
 
 // rankine is T_F + 460 at an absolute temperature in K: not quite the temperature in °R.
