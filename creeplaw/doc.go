@@ -8,9 +8,10 @@
 //	Law          the rate and its partial derivatives     every law
 //	Logarithmic  the logarithm of the rate                every law of this package; Log adapts any other
 //	Explainer    why a point is outside the domain        laws with a limited domain
+//	Evolving     internal variables and their evolution   damage, cavitation, deformation resistance
 //	Parametric   its parameters, and the law from others  every law of this package that is built from numbers
 //
-// History enters through the accumulated creep strain (strain hardening), never through a clock.
+// History enters through the accumulated creep strain (strain hardening) and through internal variables, never through a clock.
 //
 // A user's own law implements Law, or is a function made one by RateFunc (with derivatives) or ValueFunc (without). Package
 // creeplaw/lawtest checks it in one line of a test.

@@ -16,9 +16,9 @@ import "math"
 // damage as much as with KachanovRabotnov. Under constant stress t_r = 1/(M (σr/σ₀)^χ) and
 // ω = -ln[1 - (1-e^-q) t/t_r]/q. Without damage the creep is Norton's law.
 //
-// The creep rate is the form for cavities and cracks on grain boundaries across the greatest principal stress. Because it is
-// divided by the von Mises stress, the rate of a damaged material rises without bound where the stress is nearly hydrostatic
-// tension: there a step may end as beyond rupture. At zero von Mises stress there is no creep.
+// The creep rate is the form for cavities and cracks on grain boundaries across the greatest principal stress. As published it
+// rises without bound where the stress is nearly hydrostatic tension; here ⟨σ1⟩/σ counts as 10 at most, which no test reaches.
+// Under such stress a step of damaged material may still end as beyond rupture. At zero von Mises stress there is no creep.
 //
 // At ω > 1 the law is undefined (NaN), as for a negative or NaN stress. The creep strain does not enter.
 //
@@ -38,6 +38,9 @@ var (
 	_ Evolving    = LiuMurakami{}
 	_ Logarithmic = LiuMurakami{}
 )
+
+// mostTriaxial is the largest ⟨σ1⟩/σ that counts.
+const mostTriaxial = 10
 
 // LiuMurakamiParameters are the parameters of LiuMurakami. Optional fields may be left zero.
 type LiuMurakamiParameters struct {
@@ -97,12 +100,14 @@ func (l LiuMurakami) Evolve(p EvolvingPoint) (e Evolution) {
 	e.LogRate = l.creep.logRate + l.creep.exponent*math.Log(p.Stress/l.creep.stress)
 	e.Creep.ByLogStress = l.creep.exponent
 	if p.PrincipalStress > 0 && omega > 0 && p.Stress > 0 {
-		ratio := p.PrincipalStress / p.Stress
+		ratio := math.Min(p.PrincipalStress/p.Stress, mostTriaxial)
 		root := math.Sqrt(omega)
 		slope := l.coupling * ratio * ratio * root // over ω
 		e.LogRate += slope * omega
-		e.Creep.ByLogStress -= 2 * slope * omega
-		e.Creep.ByPrincipalStress = 2 * slope * omega / p.PrincipalStress
+		if ratio < mostTriaxial {
+			e.Creep.ByLogStress -= 2 * slope * omega
+			e.Creep.ByPrincipalStress = 2 * slope * omega / p.PrincipalStress
+		}
 		e.Creep.ByInternal[0] = 1.5 * slope
 	}
 	damage := &e.Internal[0]

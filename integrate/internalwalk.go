@@ -28,8 +28,8 @@ const (
 	mostStarts     = 30
 	firstWalkStep  = 0.5
 	shortestStep   = 1e-9
-	bearableError  = 0.1  // of a prediction, in the logarithms of the rates
-	bearableTurn   = 0.7  // between the directions at both ends of a step
+	bearableError  = 0.05 // of a prediction, in the logarithms of the rates
+	bearableTurn   = 0.5  // between the directions at both ends of a step
 	startFeedback  = 0.02 // what the first point may change in the logarithms of the rates
 	timeWeight     = 0.1  // of ln Δt among the coordinates
 	longestStretch = 4.0  // growth of a step
@@ -234,15 +234,11 @@ func (w *walker) arrive(rest float64) progress {
 func (w *walker) connected(y *node, rest float64) bool {
 	var d, along direction
 	n := w.size()
-	if !w.linear(y, n, &d, &along) || w.turn(y, &along) > bearableTurn || w.softens(y) {
+	if !w.linear(y, n, &d, &along) || w.turn(y, &along) > bearableTurn {
 		return false
 	}
-	way := w.way(y)
-	for i := range n {
-		d[i] = way[i] - 0.5*rest*(w.along[i]/w.along[n]+along[i])
-	}
-	d[n], way[n] = 0, 0
-	return w.reach(y, &d) <= 0.2*w.reach(y, &way)+0.1
+	here := *scaled(w.along, 1/w.along[n])
+	return !w.bends(y, &here, &along, rest)
 }
 
 // progress is what a step of the walk came to.
@@ -274,20 +270,31 @@ func (w *walker) step() progress {
 		return onTheWay
 	}
 	along = *scaled(along, 1/w.reach(&y, &along))
-	if w.bends(&y, &along, length) {
+	if w.bends(&y, &w.along, &along, length) {
 		w.length = length / 2
 		return onTheWay
 	}
 	return w.accept(&y, &along, length, first)
 }
 
-// bends reports whether ln Δt between here and y may have done something that the directions at both ends do not tell of, such
-// as turning back and forth: when it did not rise as they say, or the softening by the creep strain changed much.
-func (w *walker) bends(y *node, along *direction, length float64) bool {
+// bends reports whether the curve between here and y may have done something that the directions at both ends do not tell of,
+// such as turning back and forth: when some coordinate did not change as they say over a length, or the softening by the creep
+// strain changed much.
+func (w *walker) bends(y *node, here, there *direction, length float64) bool {
 	n := w.size()
-	rise := y.logTime - w.at.logTime
-	byEnds := 0.5 * length * (w.along[n] + along[n])
-	return math.Abs(rise-byEnds) > 0.2*math.Abs(rise)+0.1 || w.softens(y)
+	way := w.way(y)
+	astray := func(i int, weight float64) bool {
+		byEnds := 0.5 * length * (here[i] + there[i])
+		return weight*math.Abs(way[i]-byEnds) > 0.2*weight*math.Abs(way[i])+0.1
+	}
+	bent := astray(n, 1) || w.softens(y)
+	if w.creeps {
+		bent = bent || astray(w.count, 1)
+	}
+	for i := range w.count {
+		bent = bent || astray(i, w.weight(y, i))
+	}
+	return bent
 }
 
 // softens reports whether the softening by the creep strain, which no coordinate stands for, has changed much from here to y.
@@ -340,7 +347,7 @@ func (w *walker) accept(y *node, along *direction, length, first float64) progre
 		}
 		w.length = length / 2
 		return onTheWay
-	case w.locate && w.atLimit(y) && length > 1e-6:
+	case w.locate && w.atLimit(y) && length > 1e-8:
 		w.length = length / 2
 		return onTheWay
 	case !w.locate && y.logTime > w.target:

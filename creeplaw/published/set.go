@@ -96,7 +96,13 @@ func (r *Record) CheckRange(p creeplaw.Point) error {
 // In returns the set in other units, its range with it. A unit that is not positive and finite is a
 // *creeplaw.ParameterError.
 func (s Set) In(units creeplaw.Units) (Set, error) {
-	law, err := creeplaw.InUnits(s.Law, s.Units, units)
+	var law creeplaw.Law
+	var err error
+	if _, ok := s.Law.(creeplaw.Evolving); ok {
+		law, err = byParameters(s.Law.(creeplaw.Parametric), s.Units, units)
+	} else {
+		law, err = creeplaw.InUnits(s.Law, s.Units, units)
+	}
 	if err != nil {
 		return Set{}, err
 	}
