@@ -19,7 +19,8 @@ type Estimate struct {
 	Creep  float64    // size of the error of the creep strain, √(⅔ Δ:Δ) [-]
 
 	// Relative is the error of the stress, as its von Mises stress, over the trial von Mises stress of the step; the same
-	// number is the error of the creep strain over the elastic strain the step could have relaxed.
+	// number is the error of the creep strain over the elastic strain the step could have relaxed. With plasticity strain can
+	// also be taken from creep for plastic strain at the same stress: then it is the largest of the three errors.
 	Relative float64
 
 	// Dt is the length a step from the same start should have for Relative to meet the tolerance, with a margin: between a
@@ -64,6 +65,9 @@ func (m *Material) EstimateStep(out *Result, old *State, start Conditions, inc I
 	}
 	if trial := 3 * t.shear * t.equivalent; trial > 0 {
 		e.Relative = e.Stress.Mises() / trial
+		if m.plastic != nil {
+			e.Relative = math.Max(e.Relative, shifted(&whole.State, &halves.State)/t.equivalent)
+		}
 	}
 	e.Dt = inc.Dt * suggestion(tolerance/e.Relative)
 	*out = whole

@@ -36,6 +36,10 @@ type Course struct {
 // known error. A host's global Newton stays quadratic on the tangent, up to the choice of steps, which changes with the
 // strain: near convergence it no longer does.
 //
+// With plasticity, whose strain has no rate of its own, steps are extrapolated from 1, 2, 3, … plain steps instead, of an order
+// that follows from the tolerance; the error of the plastic strain is kept as that of the creep strain is, and the stress is on
+// the yield surface to within the tolerance.
+//
 // first is the length of the first step to try [time]; 0 lets Follow choose. Course.Dt of the increment before is a good one.
 // Hardening from zero strain starts by itself, with steps graded from the time at which creep first matters.
 //
@@ -55,6 +59,9 @@ func (m *Material) Follow(out *Result, old *State, start Conditions, inc Increme
 			return Course{}, code
 		}
 		return Course{Dt: first}, nil
+	}
+	if m.plastic != nil {
+		return m.followPlastic(out, old, start, &inc, tolerance, first, true)
 	}
 	f := m.walk(old, start, &inc, tolerance, first)
 	f.differentiates = true
@@ -81,6 +88,9 @@ func (m *Material) FollowStress(stress *tensor.Sym, end, old *State, start Condi
 	}
 	if inc.Dt == 0 {
 		return Course{Dt: first}, m.Stress(stress, end, old, inc)
+	}
+	if m.plastic != nil {
+		return m.followStressPlastic(stress, end, old, start, &inc, tolerance, first)
 	}
 	f := m.walk(old, start, &inc, tolerance, first)
 	if code := f.run(); code != 0 {

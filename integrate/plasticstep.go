@@ -80,6 +80,12 @@ func (y *plasticStep) write(end, old *State) {
 	}
 }
 
+// shifted is the error of creep or plastic strain in one step, from that step and two halves: twice their difference.
+func shifted(whole, halves *State) float64 {
+	creep, plastic := whole.Creep.Sub(halves.Creep), whole.Plastic.Sub(halves.Plastic)
+	return 2 * math.Max(creep.EquivalentStrain(), plastic.EquivalentStrain())
+}
+
 func (m *Material) refusalPlastic(old *State, inc *Increment) Code {
 	switch {
 	case !inc.valid():
