@@ -75,7 +75,7 @@ func TestFollowWithInternalVariables(t *testing.T) {
 			variable := math.Abs(out.State.Internal[0]-damage) / math.Max(math.Abs(damage), 0.1*unit)
 			t.Logf("%s, tolerance %.0e: error of the stress %.1e, of the variable %.1e, %d steps", name, tolerance, achieved, variable,
 				course.Steps)
-			require.LessOrEqual(t, achieved, 3*tolerance+1e-9)        // the extrapolation is good to about 1e-10
+			require.LessOrEqual(t, achieved, 3*tolerance+1e-9) // the extrapolation is good to about 1e-10
 			require.LessOrEqual(t, variable, 3*tolerance+1e-9, name)
 
 			var stress tensor.Sym
