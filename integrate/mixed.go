@@ -29,6 +29,7 @@ type MixedResult struct {
 	StressByTemperature tensor.Sym    // ∂σ/∂T [stress/K]
 	StrainByTemperature tensor.Sym    // ∂ε/∂T [1/K]
 	CreepStep           float64       // Δp: equivalent creep strain of the step [-]
+	PlasticStep         float64       // Δκ: equivalent plastic strain of the step [-]; 0 without plasticity or yielding
 	Iterations          int           // corrections the scalar solve made
 	Residual            float64       // what it left in ln Δp, relative to the law; 0 for an elastic step
 }
@@ -39,27 +40,28 @@ type MixedResult struct {
 // For a given ω = 2Gλ, Δεc = λ s, the end state is that of a linear elastic solid with the shear modulus G/(1+ω): everything
 // is linear but one scalar equation in ω, Δp = ω σₑ/3G = Δt ṗ(σₑ, p₀+Δp, T). As ω grows σₑ never rises and Δp never falls, so
 // there is one root for every law that rises with stress and does not soften, whatever the mixture, the step size and the
-// stress exponent. There is no iteration on the strains. A law with internal variables is solved for ω by Step.
+// stress exponent. There is no iteration on the strains. With internal variables or plasticity ω
+// is found through Step.
 //
 // Prescribed stresses and strains are met exactly, relations to rounding of stress and strain as a whole. Δt = 0 is an elastic
 // step. Nothing is allocated.
 //
 // The error is nil or a Code; then out is untouched. old is never written, but may be &out.State. A prescribed stress so high
 // that no finite creep strain satisfies the law gives LawUndefined; a softening law that has no solution connected to a
-// vanishing step, as when the prescribed stress ruptures it, gives BeyondRupture. So does a law with internal variables where
-// Step refuses the strain at the end.
+// vanishing step, as when the prescribed stress ruptures it, gives BeyondRupture. So do a law with internal variables where
+// Step refuses the strain at the end, and a prescribed stress above what plasticity without further hardening can carry.
 func (m *Material) StepMixed(out *MixedResult, old *State, inc MixedIncrement) error {
-	if code := m.stepMixed(out, old, &inc, m.evolves()); code != 0 {
+	if code := m.stepMixed(out, old, &inc, m.throughStep()); code != 0 {
 		return code
 	}
 	return nil
 }
 
-func (m *Material) stepMixed(out *MixedResult, old *State, inc *MixedIncrement, evolves bool) Code {
+func (m *Material) stepMixed(out *MixedResult, old *State, inc *MixedIncrement, throughStep bool) Code {
 	if !inc.valid() {
 		return BadIncrement
 	}
-	if !old.valid() {
+	if !old.valid() || m.plastic.fault(old) != nil {
 		return BadState
 	}
 	var p mixedPoint
@@ -74,8 +76,8 @@ func (m *Material) stepMixed(out *MixedResult, old *State, inc *MixedIncrement, 
 	}
 	x := flowed{stress: problem.trial, strain: old.Equivalent, kept: 1}
 	s := sensitivity{slope: 1, h: 1}
-	if evolves {
-		return m.stepMixedEvolving(out, old, inc, &p, &x)
+	if throughStep {
+		return m.bridgeMixed(out, old, inc, &p, &x)
 	}
 	if inc.Dt > 0 && problem.count > 0 {
 		if code := problem.solve(&x); code != 0 {
@@ -90,20 +92,42 @@ func (m *Material) stepMixed(out *MixedResult, old *State, inc *MixedIncrement, 
 		}
 	}
 	p.end(&x)
-	out.write(old, old, inc, &p, &x)
+	state := *old // which may be &out.State
+	state.grow(x.creep, 0, p.deviator.Scale(x.odds/(2*p.shear)))
+	out.write(&state, inc, &p, &x)
+	out.CreepStep, out.PlasticStep = x.creep, 0
 	out.derive(inc, &p, &x, s)
 	return 0
 }
 
-// stepMixedEvolving is stepMixed for a law with internal variables, which only Step knows how to carry.
-func (m *Material) stepMixedEvolving(out *MixedResult, old *State, inc *MixedIncrement, p *mixedPoint, x *flowed) Code {
+// bridgeMixed is stepMixed for a material that only Step knows how to carry.
+func (m *Material) bridgeMixed(out *MixedResult, old *State, inc *MixedIncrement, p *mixedPoint, x *flowed) Code {
 	b := bridge{point: *p, x: *x, old: *old, inc: *inc}
 	if code := b.solve(m); code != 0 {
 		return code
 	}
-	out.write(&b.old, &b.step.State, inc, &b.point, &b.x)
+	creep, plastic := b.step.CreepStep, b.step.PlasticStep
+	if sum := creep + plastic; sum > 0 {
+		creep, plastic = b.x.creep*(creep/sum), b.x.creep*(plastic/sum)
+	}
+	b.old.Internal = b.step.State.Internal
+	b.old.grow(creep, plastic, b.point.deviator.Scale(b.x.odds/(2*p.shear)))
+	out.write(&b.old, inc, &b.point, &b.x)
+	out.CreepStep, out.PlasticStep = creep, plastic
 	out.derive(inc, &b.point, &b.x, sensitivity{bridge: &b.bridged})
 	return 0
+}
+
+// grow adds the inelastic strain of a step to a state: its equivalents, and the tensor that they share.
+func (s *State) grow(creep, plastic float64, strain tensor.Sym) {
+	s.Equivalent += creep
+	if plastic == 0 {
+		s.Creep = s.Creep.Add(strain)
+		return
+	}
+	s.EquivalentPlastic += plastic
+	s.Creep = s.Creep.Add(strain.Scale(creep / (creep + plastic)))
+	s.Plastic = s.Plastic.Add(strain.Scale(plastic / (creep + plastic)))
 }
 
 func (inc *MixedIncrement) valid() bool {
@@ -116,6 +140,7 @@ type mixedPoint struct {
 	system        mixedSystem
 	trial         mixedAmplitudes
 	free, freeByT float64    // εₜ, dεₜ/dT
+	inelastic     tensor.Sym // creep and plastic strain at the start
 	odds          float64    // ω of the end state
 	keep          mixedKeep  // and what it leaves of the modes
 	stress        tensor.Sym // the end state
@@ -133,13 +158,17 @@ func (m *Material) begin(p *mixedPoint, old *State, inc *MixedIncrement) Code {
 	if !(p.bulk > 0 && p.shear > 0 && finite(p.free)) {
 		return OutsideTable
 	}
+	p.inelastic = old.Creep
+	if m.plastic != nil {
+		p.inelastic = old.Creep.Add(old.Plastic)
+	}
 	p.system.build(&inc.Control, p.bulk, p.shear)
 	var data tensor.Sym
 	for i := range data {
 		k := &inc.Control.component[i]
 		data[i] = inc.Prescribed[i] * k.unit()
 		if !k.stress {
-			data[i] -= old.Creep[i]
+			data[i] -= p.inelastic[i]
 			if i <= tensor.ZZ {
 				data[i] -= p.free
 			}
@@ -166,7 +195,7 @@ func (p *mixedPoint) byRelation(k *condition) bool {
 }
 
 // strain is the total strain of the end state: as prescribed, or by the flow rule and Hooke's law.
-func (p *mixedPoint) strain(inc *MixedIncrement, old *State, odds float64) (strain tensor.Sym) {
+func (p *mixedPoint) strain(inc *MixedIncrement, odds float64) (strain tensor.Sym) {
 	elastic, creep := 1/(2*p.shear), odds/(2*p.shear)
 	volume := p.mean/(3*p.bulk) + p.free
 	for i := range strain {
@@ -174,7 +203,7 @@ func (p *mixedPoint) strain(inc *MixedIncrement, old *State, odds float64) (stra
 			strain[i] = inc.Prescribed[i]*k.unit() - k.compliance*p.stress[i]
 			continue
 		}
-		strain[i] = old.Creep[i] + creep*p.deviator[i] + elastic*p.deviator[i]
+		strain[i] = p.inelastic[i] + creep*p.deviator[i] + elastic*p.deviator[i]
 		if i <= tensor.ZZ {
 			strain[i] += volume
 		}
@@ -182,17 +211,10 @@ func (p *mixedPoint) strain(inc *MixedIncrement, old *State, odds float64) (stra
 	return strain
 }
 
-// write sets stress, strain and state; what is neither creep strain nor p is taken over from the state rest. old and rest may
-// be &out.State.
-func (out *MixedResult) write(old, rest *State, inc *MixedIncrement, p *mixedPoint, x *flowed) {
-	state := *rest
-	for i := range state.Creep {
-		state.Creep[i] = old.Creep[i] + x.odds/(2*p.shear)*p.deviator[i]
-	}
-	state.Equivalent = old.Equivalent + x.creep
-	out.Strain = p.strain(inc, old, x.odds)
+// write sets stress, strain and state.
+func (out *MixedResult) write(state *State, inc *MixedIncrement, p *mixedPoint, x *flowed) {
+	out.Strain = p.strain(inc, x.odds)
 	out.Stress = p.stress
-	out.State = state
-	out.CreepStep = x.creep
+	out.State = *state
 	out.Iterations, out.Residual = x.iterations, x.residual
 }

@@ -284,6 +284,7 @@ func TestControlledStepsAllocateNothing(t *testing.T) {
 	plain := controlMaterial(t)
 	damage := damageMaterial(t, creeplaw.KachanovRabotnovParameters{Prefactor: 1e-6, StressExponent: 5, DamagePrefactor: 1e-6,
 		DamageStressExponent: 4, DamageExponent: 5, ReferenceStress: 100})
+	yields := plasticMaterial(t, plain.Law(), integrate.LinearHardening{Yield: integrate.Constant(50), Modulus: integrate.Constant(1e4)})
 	var bar integrate.UniaxialResult
 	var sheet integrate.PlaneStressResult
 	var mixed integrate.MixedResult
@@ -296,7 +297,7 @@ func TestControlledStepsAllocateNothing(t *testing.T) {
 		dt     float64
 		fails  bool
 	}{{"good", 1e-3, 10, false}, {"elastic", 1e-3, 0, false}, {"refused", math.NaN(), 10, true}} {
-		for name, m := range map[string]*integrate.Material{"plain": plain, "with damage": damage} {
+		for name, m := range map[string]*integrate.Material{"plain": plain, "with damage": damage, "with plasticity": yields} {
 			for entry, step := range map[string]func() error{
 				"bar": func() error {
 					return m.StepUniaxial(&bar, &old, integrate.UniaxialIncrement{Dt: c.dt, Strain: c.strain, Temperature: 800})

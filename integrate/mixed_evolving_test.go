@@ -128,7 +128,7 @@ func TestOneStepOfSoftening(t *testing.T) {
 // TestMixedEvolvingIsStep takes random steps of a damaging law, the greatest principal stress at work in half of them, under
 // random mixtures of control: Step with the strain that comes back makes the same stress, or the step is beyond rupture.
 func TestMixedEvolvingIsStep(t *testing.T) {
-	count := 3000
+	count := 1500
 	if *campaign {
 		count = 60_000
 	}

@@ -85,7 +85,7 @@ func (d *derivativeTally) compare(f func(x float64) tensor.Sym, scale float64, g
 //
 // Tolerance 1e-8 of the column, as for Step; see TestTangentIsTheDerivativeOfTheUpdate.
 func TestMixedDerivatives(t *testing.T) {
-	count := 500
+	count := 300
 	if *campaign {
 		count = 20_000
 	}
@@ -249,7 +249,7 @@ func (d *derivativeTally) sheet(t *testing.T, c *controlledCase) float64 {
 func TestMixedDerivativesWithDamage(t *testing.T) {
 	s := newSource(242)
 	var tally derivativeTally
-	for i := range 300 {
+	for i := range 150 {
 		n := s.uniform(1, 8)
 		m := damageMaterial(t, creeplaw.KachanovRabotnovParameters{Prefactor: 1e-6, StressExponent: n, DamagePrefactor: s.decades(-8, -4),
 			DamageStressExponent: s.uniform(1, n), DamageExponent: s.uniform(1, 6), ReferenceStress: 100,

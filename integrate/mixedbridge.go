@@ -6,13 +6,13 @@ import (
 	"example.com/holdtime/tensor"
 )
 
-// bridged is the scalar problem of mixed control for a law with internal variables, whose rate cannot be asked for by stress
-// and creep strain alone. For any ω the mixed control has a strain ε(ω); Step, given that strain, creeps by some odds of its
-// own, 3GΔp/σₑ. Where they are ω the two agree in everything:
+// bridged is the scalar problem of mixed control for a law with internal variables or a material with plasticity, whose flow
+// cannot be asked for by stress and creep strain alone. For any ω the mixed control has a strain ε(ω); Step, given that strain,
+// flows by some odds of its own, 3GΔp/σₑ with creep and plastic strain in Δp. Where they are ω the two agree in everything:
 //
 //	Φ(z) = ln ω - ln(3GΔp/σₑ of Step),   z = ln ω
 //
-// Φ is negative while Step creeps more than the mixed control left room for. The search comes from there, so that it meets the
+// Φ is negative while Step flows more than the mixed control left room for. The search comes from there, so that it meets the
 // first solution first. Where Φ turns down before it is zero that may be rupture, or only the strain that Step is asked at;
 // then the solution is followed from a short time (see follow). Step itself may refuse a strain that all at once, from the
 // start of the step, would rupture the material: such a step is beyond rupture here too, and a shorter one is not.
@@ -21,7 +21,7 @@ type bridged struct {
 	mises float64 // σₑ of step
 	odds  float64 // 3GΔp/σₑ of step
 	trial float64 // q of the strain
-	spent float64 // 3GΔp of step
+	spent float64 // 3GΔp of step, plastic strain with it
 	phi   float64
 	slope float64 // dΦ/dz
 }
@@ -37,14 +37,16 @@ type bridge struct {
 }
 
 const (
-	bridgeMost  = 200  // of Step in one search
-	bridgeNoise = 1e-9 // what Step may leave in ln Δp where damage is far advanced
+	bridgeMost = 200 // of Step in one search
+	// farthestStrain is an inelastic strain that says there is no end: the stress prescribed is more than the material carries.
+	farthestStrain = 1e6
+	bridgeNoise    = 1e-9 // what Step may leave in ln Δp where damage is far advanced
 )
 
 // solve finds the solution that is connected to Δt → 0, leaving the end state in the point and x.
 func (b *bridge) solve(m *Material) Code {
 	code := b.search(m)
-	if code == BeyondRupture || code == NoConvergence {
+	if (code == BeyondRupture || code == NoConvergence) && m.plastic == nil {
 		code = b.follow(m, code)
 	}
 	b.x.iterations = b.asked
@@ -59,8 +61,11 @@ func (b *bridge) search(m *Material) Code {
 	if b.odds == 0 {
 		return 0
 	}
-	z := math.Log(b.odds) // what creeps away at the strain of the elastic step: not above the solution
+	z := math.Log(b.odds) // what flows away at the strain of the elastic step: not above the solution
 	low, high, stride := math.Inf(-1), math.Inf(1), 1.0
+	if m.plastic != nil { // nothing to step over
+		stride = 5
+	}
 	for range bridgeMost {
 		if code := b.evaluate(m, math.Exp(z)); code != 0 || b.odds == 0 {
 			if code == 0 {
@@ -74,7 +79,7 @@ func (b *bridge) search(m *Material) Code {
 			continue
 		}
 		switch {
-		case b.phi <= 0 && !(b.slope > 0):
+		case b.phi <= 0 && !(b.slope > 0), b.phi < 0 && b.x.creep > farthestStrain:
 			return BeyondRupture
 		case b.done(z):
 			return 0
@@ -183,19 +188,19 @@ func (b *bridge) evaluate(m *Material, odds float64) Code {
 	b.asked++
 	x.odds = odds
 	p.end(x)
-	full := Increment{Dt: inc.Dt, Strain: p.strain(inc, &b.old, odds), Temperature: inc.Temperature}
+	full := Increment{Dt: inc.Dt, Strain: p.strain(inc, odds), Temperature: inc.Temperature}
 	if code := m.step(&b.step, &b.old, &full); code != 0 {
 		return code
 	}
 	x.stress = math.Sqrt(1.5 * p.deviator.Dot(p.deviator))
 	b.trial = x.stress * (1 + odds)
 	x.creep = odds * x.stress / (3 * p.shear)
-	b.spent = 3 * p.shear * b.step.CreepStep
+	b.spent = 3 * p.shear * (b.step.CreepStep + b.step.PlasticStep)
 	b.mises = b.trial - b.spent
 	if b.spent > b.trial/2 {
 		b.mises = b.step.Stress.Mises()
 	}
-	if x.stress == 0 || b.step.CreepStep == 0 {
+	if x.stress == 0 || b.spent == 0 {
 		b.odds = 0
 		return 0
 	}

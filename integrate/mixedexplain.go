@@ -56,7 +56,7 @@ func (m *Material) ExplainControlled(err error, old *State, increment Controlled
 		e.Reason = x.CheckPoint(at)
 	}
 	e.Quantity, e.Value = "trial von Mises stress", at.Stress
-	if rate := m.law.LogRate(at).Value; e.Reason == nil && !math.IsNaN(rate) && !m.evolves() {
+	if rate := m.law.LogRate(at).Value; e.Reason == nil && !math.IsNaN(rate) && !m.throughStep() {
 		e.Quantity, e.Value = "creep strain the prescribed stress would make", math.Inf(1)
 	}
 	return e

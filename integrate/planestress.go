@@ -26,6 +26,7 @@ type PlaneStressResult struct {
 	Tangent       [3][3]float64 // ∂σ/∂ε of the discrete update with the thickness free [stress]
 	ByTemperature tensor.Sym    // ∂σ/∂T of the discrete update at fixed strain in the plane [stress/K]
 	CreepStep     float64       // Δp: equivalent creep strain of the step [-]
+	PlasticStep   float64       // Δκ: equivalent plastic strain of the step [-]; 0 without plasticity or yielding
 	Iterations    int           // corrections the scalar solve made
 	Residual      float64       // what it left in ln Δp, relative to the law; 0 for an elastic step
 }
@@ -50,6 +51,7 @@ func (r *PlaneStressResult) Spread(c *tensor.Tangent) {
 //	σₑ² = ¼σ₊² + ¾σ₋² + 3σ_xy²,              Δp = ω σₑ/3G = Δt ṗ(σₑ, p₀+Δp, T)
 //
 // The state is that of Step: a point may change between the entry points. Any step size is accepted; nothing is allocated.
+// With internal variables or plasticity the step goes through StepMixed, at several times the cost.
 //
 // The error is nil or a Code; then out is untouched. old is never written, but may be &out.State.
 func (m *Material) StepPlaneStress(out *PlaneStressResult, old *State, inc PlaneStressIncrement) error {
@@ -60,8 +62,8 @@ func (m *Material) StepPlaneStress(out *PlaneStressResult, old *State, inc Plane
 }
 
 func (m *Material) stepPlaneStress(out *PlaneStressResult, old *State, inc *PlaneStressIncrement) Code {
-	if m.evolves() {
-		return m.planeStressEvolving(out, old, inc)
+	if m.throughStep() {
+		return m.bridgePlaneStress(out, old, inc)
 	}
 	t := m.sheetAt(old, inc)
 	if !(t.ok && inc.Dt >= 0 && finite(inc.Dt) && old.valid()) {
@@ -129,7 +131,7 @@ func (out *PlaneStressResult) write(old *State, inc *PlaneStressIncrement, t *sh
 	state.Creep[tensor.XY] += flow * shear
 	state.Equivalent += x.creep
 	out.State = state
-	out.CreepStep = x.creep
+	out.CreepStep, out.PlasticStep = x.creep, 0
 	out.Stress = tensor.Sym{tensor.XX: (sum + difference) / 2, tensor.YY: (sum - difference) / 2, tensor.XY: shear}
 	out.Strain = state.Creep
 	out.Strain[tensor.XX], out.Strain[tensor.YY] = inc.Strain[tensor.XX], inc.Strain[tensor.YY]

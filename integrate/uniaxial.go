@@ -32,6 +32,7 @@ type UniaxialResult struct {
 	Tangent       float64    // ∂σ_xx/∂ε_xx of the discrete update [stress]
 	ByTemperature float64    // ∂σ_xx/∂T of the discrete update at fixed ε_xx [stress/K]
 	CreepStep     float64    // Δp: equivalent creep strain of the step [-]
+	PlasticStep   float64    // Δκ: equivalent plastic strain of the step [-]; 0 without plasticity or yielding
 	Iterations    int        // corrections the scalar solve made
 	Residual      float64    // what it left in ln Δp, relative to the law; 0 for an elastic step
 }
@@ -42,6 +43,7 @@ type UniaxialResult struct {
 //	|σ| = |σ_trial| - E Δp,   σ_trial = E (ε - εc_xx - εₜ),   Δεc = ±Δp diag(1, -½, -½)
 //
 // The state is that of Step: a point may change between the entry points. Any step size is accepted; nothing is allocated.
+// With internal variables or plasticity the step goes through StepMixed, at several times the cost.
 //
 // The error is nil or a Code; then out is untouched. old is never written, but may be &out.State.
 func (m *Material) StepUniaxial(out *UniaxialResult, old *State, inc UniaxialIncrement) error {
@@ -52,8 +54,8 @@ func (m *Material) StepUniaxial(out *UniaxialResult, old *State, inc UniaxialInc
 }
 
 func (m *Material) stepUniaxial(out *UniaxialResult, old *State, inc *UniaxialIncrement) Code {
-	if m.evolves() {
-		return m.uniaxialEvolving(out, old, inc.asMixed())
+	if m.throughStep() {
+		return m.bridgeUniaxial(out, old, inc.asMixed())
 	}
 	b := m.barAt(inc.Temperature)
 	elastic := inc.Strain - old.Creep[tensor.XX] - b.free
@@ -100,8 +102,8 @@ func (m *Material) StepUniaxialStress(out *UniaxialResult, old *State, load Unia
 }
 
 func (m *Material) stepUniaxialStress(out *UniaxialResult, old *State, load *UniaxialLoad) Code {
-	if m.evolves() {
-		return m.uniaxialEvolving(out, old, load.asMixed())
+	if m.throughStep() {
+		return m.bridgeUniaxial(out, old, load.asMixed())
 	}
 	b := m.barAt(load.Temperature)
 	if !(b.ok && load.Dt >= 0 && finite(load.Dt) && finite(load.Stress) && old.valid()) {
@@ -167,7 +169,7 @@ func (out *UniaxialResult) write(old *State, b *bar, stress, creep float64) {
 	state.Creep[tensor.XX] += creep
 	state.Creep[tensor.YY] -= creep / 2
 	state.Creep[tensor.ZZ] -= creep / 2
-	out.CreepStep = math.Abs(creep)
+	out.CreepStep, out.PlasticStep = math.Abs(creep), 0
 	state.Equivalent += out.CreepStep
 	out.State = state
 	out.Stress = stress

@@ -2,12 +2,12 @@ package integrate
 
 import "example.com/holdtime/tensor"
 
-// evolves reports whether the law has internal variables or sees more of the stress than its von Mises equivalent, so that
-// only Step knows how to carry it. The light entry points then go through StepMixed.
-func (m *Material) evolves() bool { return m.memory.law != nil }
+// throughStep reports whether only Step knows how to carry the material: with internal variables, a law that sees more of the
+// stress than its von Mises equivalent, or plasticity. The light entry points then go through StepMixed.
+func (m *Material) throughStep() bool { return m.memory.law != nil || m.plastic != nil }
 
-// uniaxialEvolving is StepUniaxial or StepUniaxialStress by StepMixed.
-func (m *Material) uniaxialEvolving(out *UniaxialResult, old *State, inc MixedIncrement) Code {
+// bridgeUniaxial is StepUniaxial or StepUniaxialStress by StepMixed.
+func (m *Material) bridgeUniaxial(out *UniaxialResult, old *State, inc MixedIncrement) Code {
 	var r MixedResult
 	if code := m.stepMixed(&r, old, &inc, true); code != 0 {
 		return code
@@ -19,6 +19,7 @@ func (m *Material) uniaxialEvolving(out *UniaxialResult, old *State, inc MixedIn
 		Tangent:       r.StressBy[tensor.XX][tensor.XX],
 		ByTemperature: r.StressByTemperature[tensor.XX],
 		CreepStep:     r.CreepStep,
+		PlasticStep:   r.PlasticStep,
 		Iterations:    r.Iterations,
 		Residual:      r.Residual,
 	}
@@ -29,8 +30,8 @@ func (m *Material) uniaxialEvolving(out *UniaxialResult, old *State, inc MixedIn
 	return 0
 }
 
-// planeStressEvolving is StepPlaneStress by StepMixed.
-func (m *Material) planeStressEvolving(out *PlaneStressResult, old *State, inc *PlaneStressIncrement) Code {
+// bridgePlaneStress is StepPlaneStress by StepMixed.
+func (m *Material) bridgePlaneStress(out *PlaneStressResult, old *State, inc *PlaneStressIncrement) Code {
 	var r MixedResult
 	mixed := inc.asMixed()
 	if code := m.stepMixed(&r, old, &mixed, true); code != 0 {
@@ -42,6 +43,7 @@ func (m *Material) planeStressEvolving(out *PlaneStressResult, old *State, inc *
 		State:         r.State,
 		ByTemperature: r.StressByTemperature,
 		CreepStep:     r.CreepStep,
+		PlasticStep:   r.PlasticStep,
 		Iterations:    r.Iterations,
 		Residual:      r.Residual,
 	}
