@@ -25,7 +25,8 @@ const (
 	OutsideTable
 
 	// LawUndefined: the creep law returned NaN at a point the solution visits.
-	// Usual cause: a law evaluated outside its domain, or a bug in a user's own law.
+	// Usual cause: a law evaluated outside its domain, a prescribed stress that no finite creep strain satisfies, or a bug in a
+	// user's own law.
 	// What to do: a smaller step may stay inside the domain; Explain asks the law for its reason.
 	LawUndefined
 
@@ -37,7 +38,7 @@ const (
 
 	// BeyondRupture: a softening law has no solution at the end of the step that is connected to a vanishing step: rupture,
 	// or an instability at fixed strain, lies within it.
-	// Usual cause: tertiary creep near the end of life.
+	// Usual cause: tertiary creep near the end of life, or a prescribed stress above what the material can carry.
 	// What to do: take a smaller step to approach rupture; stop when the smallest useful step still returns it.
 	BeyondRupture
 )
