@@ -77,7 +77,7 @@ type plasticFollower struct {
 // followPlastic is Follow for a material with plasticity; it fills the derivatives of out only if they are wanted.
 func (m *Material) followPlastic(out *Result, old *State, start Conditions, inc *Increment, tolerance Tolerance, first float64,
 	differentiates bool) (Course, error) {
-	if m.plastic.fault(old) != nil {
+	if !old.plasticValid() {
 		return Course{}, BadState
 	}
 	end := Conditions{inc.Strain, inc.Temperature}

@@ -61,7 +61,7 @@ func (m *Material) stepMixed(out *MixedResult, old *State, inc *MixedIncrement, 
 	if !inc.valid() {
 		return BadIncrement
 	}
-	if !old.valid() || m.plastic.fault(old) != nil {
+	if !old.valid() || m.plastic != nil && !old.plasticValid() {
 		return BadState
 	}
 	var p mixedPoint

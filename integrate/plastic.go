@@ -124,11 +124,14 @@ func (m *plasticity) unpack(s *State, src []float64) {
 	}
 }
 
-// fault names the plastic strain that no material can have, nil if they are in order or not used.
-func (m *plasticity) fault(s *State) error {
+// plasticValid reports whether the plastic strains are ones a material can have.
+func (s *State) plasticValid() bool {
+	return s.EquivalentPlastic >= 0 && finite(s.EquivalentPlastic) && s.Plastic.IsFinite()
+}
+
+// plasticFault names the one that is not, nil if there is none.
+func (s *State) plasticFault() error {
 	switch {
-	case m == nil:
-		return nil
 	case !(s.EquivalentPlastic >= 0) || math.IsInf(s.EquivalentPlastic, 1):
 		return &UpdateError{Code: BadState, Quantity: "equivalent plastic strain", Value: s.EquivalentPlastic}
 	case !s.Plastic.IsFinite():

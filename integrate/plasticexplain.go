@@ -10,7 +10,7 @@ func (m *Material) explainPlastic(code Code, old *State, inc *Increment) error {
 	case BadIncrement:
 		return inc.fault()
 	case BadState:
-		if fault := m.plastic.fault(old); fault != nil {
+		if fault := old.plasticFault(); fault != nil {
 			return fault
 		}
 		return old.fault()

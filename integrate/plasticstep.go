@@ -43,7 +43,7 @@ type plasticStep struct {
 // solve judges the step and solves its scalar problem: without plastic flow where the trial stress is below the yield stress.
 func (y *plasticStep) solve(m *Material, old *State, inc *Increment) Code {
 	var ok bool
-	if y.trial, ok = m.trialState(old, inc); !ok || !inc.valid() || !old.valid() || m.plastic.fault(old) != nil {
+	if y.trial, ok = m.trialState(old, inc); !ok || !inc.valid() || !old.valid() || !old.plasticValid() {
 		return m.refusalPlastic(old, inc)
 	}
 	q, equivalent := 3*y.shear*y.equivalent, y.equivalent
@@ -90,7 +90,7 @@ func (m *Material) refusalPlastic(old *State, inc *Increment) Code {
 	switch {
 	case !inc.valid():
 		return BadIncrement
-	case !old.valid() || m.plastic.fault(old) != nil:
+	case !old.valid() || !old.plasticValid():
 		return BadState
 	}
 	sum := old.inelastic()
