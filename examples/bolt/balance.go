@@ -4,9 +4,10 @@ import (
 	"fmt"
 	"math"
 
+	"gonum.org/v1/gonum/mat"
+
 	"example.com/holdtime/integrate"
 	"example.com/holdtime/tensor"
-	"gonum.org/v1/gonum/mat"
 )
 
 // condition is the joint at one moment, in equilibrium.

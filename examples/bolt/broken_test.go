@@ -10,6 +10,8 @@ import (
 
 	"github.com/stretchr/testify/assert"
 	"github.com/stretchr/testify/require"
+
+	"example.com/holdtime/examples/commandline"
 )
 
 // broken is one slip in an otherwise good file. The message has to name the file, the line and the column, which is where
@@ -122,7 +124,7 @@ func TestBrokenFilesAreToldByLineAndColumn(t *testing.T) {
 				status := command([]string{"-joint", filepath.Join(folder, "bolt.json"), "-history",
 					filepath.Join(folder, "history.csv")}, &out, &err)
 				message := strings.ReplaceAll(err.String(), folder+string(filepath.Separator), "")
-				assert.Equal(t, refused, status)
+				assert.Equal(t, commandline.Refused, status)
 				assert.Empty(t, out.String())
 				assert.True(t, strings.HasPrefix(message, file+":"+b.where+": "), "the message is %q, want it to begin with %s:%s",
 					message, file, b.where)

@@ -2,9 +2,6 @@ package main
 
 import (
 	"bytes"
-	"encoding/xml"
-	"image/png"
-	"io"
 	"math"
 	"os"
 	"path/filepath"
@@ -13,40 +10,27 @@ import (
 	"strings"
 	"testing"
 
-	"example.com/holdtime/bench/check"
 	"github.com/stretchr/testify/assert"
 	"github.com/stretchr/testify/require"
+
+	"example.com/holdtime/bench/check"
+	"example.com/holdtime/examples/commandline"
+	"example.com/holdtime/examples/commandline/commandtest"
+	"example.com/holdtime/examples/figure/figuretest"
 )
 
 func TestFlags(t *testing.T) {
-	cases := []struct {
-		args   []string
-		status int
-		says   string
-	}{
-		{[]string{"-h"}, done, "retighten [kN]"},
-		{[]string{"-help"}, done, "stress_coefficient_per_MPa"},
-		{[]string{"-x"}, refused, "-h"},
-		{[]string{"file.csv"}, refused, "file.csv"},
-		{[]string{"-tolerance", "0"}, refused, "-tolerance is 0"},
-		{[]string{"-tolerance", "NaN"}, refused, "-tolerance is NaN"},
-		{[]string{"-every", "-1"}, refused, "-every is -1"},
-		{[]string{"-every", "1"}, refused, "longer hours"},
-		{[]string{"-joint", "not-there.json"}, refused, "not-there.json"},
-		{[]string{"-history", "not-there.csv"}, refused, "not-there.csv"},
-	}
-	for _, c := range cases {
-		var out, err bytes.Buffer
-		assert.Equal(t, c.status, command(c.args, &out, &err), "%v", c.args)
-		if c.status == done {
-			assert.Contains(t, out.String(), c.says)
-			assert.Contains(t, out.String(), "governing code")
-			assert.Empty(t, err.String())
-		} else {
-			assert.Contains(t, err.String(), c.says, "%v", c.args)
-			assert.Empty(t, out.String(), "%v", c.args)
-		}
-	}
+	commandtest.Helps(t, command, "retighten [kN]", "stress_coefficient_per_MPa")
+	commandtest.Refuses(t, command, [][2]string{
+		{"-x", "-h"},
+		{"file.csv", "file.csv"},
+		{"-tolerance 0", "-tolerance is 0"},
+		{"-tolerance NaN", "-tolerance is NaN"},
+		{"-every -1", "-every is -1"},
+		{"-every 1", "longer hours"},
+		{"-joint not-there.json", "not-there.json"},
+		{"-history not-there.csv", "not-there.csv"},
+	})
 }
 
 // The printed table of a case with a closed form, column by column, as an engineer would check it by hand.
@@ -56,7 +40,7 @@ func TestPrintedTable(t *testing.T) {
 	require.NoError(t, os.WriteFile(jointPath, []byte(followUpJoint), 0o666))
 	require.NoError(t, os.WriteFile(historyPath, []byte(hold(1000)), 0o666))
 	var out, err bytes.Buffer
-	require.Equal(t, done, command([]string{"-joint", jointPath, "-history", historyPath, "-every", "100"}, &out, &err), err.String())
+	require.Equal(t, commandline.Done, command([]string{"-joint", jointPath, "-history", historyPath, "-every", "100"}, &out, &err), err.String())
 	rows := regexp.MustCompile(`(?m)^ +(\d[\d ]*)  +527  +527  +(\d+)  +([\d.]+)  +([\d.]+)  +([\d.]+)(.*)$`).
 		FindAllStringSubmatch(out.String(), -1)
 	require.Len(t, rows, 12, "11 hundreds of hours and the fall under 100 kN in\n%s", out.String())
@@ -85,14 +69,9 @@ func TestPrintedTable(t *testing.T) {
 func TestPictures(t *testing.T) {
 	folder := filepath.Join(t.TempDir(), "new", "folder")
 	var out, err bytes.Buffer
-	require.Equal(t, done, command([]string{"-out", folder}, &out, &err), err.String())
-	f, e := os.Open(filepath.Join(folder, "bolt.png"))
-	require.NoError(t, e)
-	defer f.Close()
-	picture, e := png.Decode(f)
-	require.NoError(t, e)
+	require.Equal(t, commandline.Done, command([]string{"-out", folder}, &out, &err), err.String())
+	picture := figuretest.PNG(t, filepath.Join(folder, "bolt.png"), 1000, 800)
 	bounds := picture.Bounds()
-	assert.True(t, bounds.Dx() > 1000 && bounds.Dy() > 800, "%v", bounds)
 	seen := map[[3]uint32]int{}
 	for y := bounds.Min.Y; y < bounds.Max.Y; y++ {
 		for x := bounds.Min.X; x < bounds.Max.X; x++ {
@@ -104,47 +83,11 @@ func TestPictures(t *testing.T) {
 		"without retightening": {140, 140, 140}} {
 		assert.Greater(t, seen[c], 300, "pixels of the %s", name)
 	}
-	text, e := os.ReadFile(filepath.Join(folder, "bolt.svg"))
-	require.NoError(t, e)
-	for _, words := range []string{"Clamp load [kN]", "Creep strain of the bolts [%]", "Time [h]", "required, 6 200 kN", "24 000", "invented"} {
-		assert.Contains(t, string(text), words)
-	}
-	d := xml.NewDecoder(bytes.NewReader(text))
-	for {
-		if _, e := d.Token(); e == io.EOF {
-			break
-		} else if e != nil {
-			t.Fatalf("the SVG is not XML: %v", e)
-		}
-	}
+	figuretest.SVG(t, filepath.Join(folder, "bolt.svg"), "Clamp load [kN]", "Creep strain of the bolts [%]", "Time [h]",
+		"required, 6 200 kN", "24 000", "invented")
 }
 
 // A folder that cannot be made is told, after the table.
 func TestPictureThatCannotBeWritten(t *testing.T) {
-	file := filepath.Join(t.TempDir(), "file")
-	require.NoError(t, os.WriteFile(file, nil, 0o666))
-	var out, err bytes.Buffer
-	assert.Equal(t, failed, command([]string{"-out", filepath.Join(file, "out")}, &out, &err))
-	assert.Contains(t, err.String(), "the picture was not drawn")
-	assert.Contains(t, out.String(), "clamp load raised")
-}
-
-func TestTicks(t *testing.T) {
-	labels := func(low, high float64) (list []string) {
-		for _, tick := range (ticks{most: 8}).Ticks(low, high) {
-			list = append(list, tick.Label)
-		}
-		return list
-	}
-	assert.Equal(t, []string{"0", "4 000", "8 000", "12 000", "16 000", "20 000", "24 000"}, labels(0, 24000))
-	assert.Equal(t, []string{"0.00", "0.04", "0.08", "0.12", "0.16", "0.20", "0.24", "0.28"}, labels(0, 0.3))
-	assert.Equal(t, []string{"0", "1", "2", "3", "4", "5", "6", "7", "8"}, labels(0, 8))
-	assert.NotEmpty(t, labels(-3, 9))
-	for _, high := range []float64{0, 5e-324, 1e308, math.Inf(1), math.NaN()} {
-		assert.LessOrEqual(t, len(labels(0, high)), 12, "%v", high)
-	}
-	assert.Equal(t, "-1 234.5", grouped(-1234.5, 1))
-	assert.Equal(t, "0.0", grouped(-0.01, 1))
-	assert.Equal(t, "123", grouped(123.4, 0))
-	assert.Equal(t, "1 000", grouped(999.6, 0))
+	commandtest.FolderThatCannotBeMade(t, command, nil, "the picture was not drawn", "clamp load raised")
 }

@@ -7,6 +7,8 @@ import (
 
 	"github.com/stretchr/testify/assert"
 	"github.com/stretchr/testify/require"
+
+	"example.com/holdtime/examples/position"
 )
 
 // Both built-in files read, and mean what they say.
@@ -52,12 +54,12 @@ func TestJointInKelvin(t *testing.T) {
 }
 
 // positioned reports whether an error names a line and a column that the text has.
-func positioned(err error, src *source) bool {
-	var e *inputError
-	if !errors.As(err, &e) || e.File != src.name || e.Text == "" {
+func positioned(err error, src *position.Source) bool {
+	var e *position.Error
+	if !errors.As(err, &e) || e.File != src.Name || e.Text == "" {
 		return false
 	}
-	lines := strings.Split(string(src.text), "\n")
+	lines := strings.Split(string(src.Text), "\n")
 	return e.Line >= 1 && e.Line <= len(lines) && e.Column >= 1 && e.Column <= len([]rune(lines[e.Line-1]))+1
 }
 
@@ -71,7 +73,7 @@ func FuzzJoint(f *testing.F) {
 		}
 	}
 	f.Fuzz(func(t *testing.T, text []byte) {
-		src := newSource("joint.json", text)
+		src := position.NewSource("joint.json", text)
 		j, err := readJoint(src)
 		switch {
 		case err != nil && !positioned(err, src):
@@ -92,12 +94,12 @@ func FuzzHistory(f *testing.F) {
 			f.Add([]byte(b.new))
 		}
 	}
-	j, err := readJoint(newSource("joint.json", defaultJoint))
+	j, err := readJoint(position.NewSource("joint.json", defaultJoint))
 	if err != nil {
 		f.Fatal(err)
 	}
 	f.Fuzz(func(t *testing.T, text []byte) {
-		src := newSource("history.csv", text)
+		src := position.NewSource("history.csv", text)
 		h, err := readHistory(src)
 		if err == nil {
 			for i, w := range h.rows {

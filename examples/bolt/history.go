@@ -7,9 +7,12 @@ import (
 	"fmt"
 	"io"
 	"math"
+	"slices"
 	"strconv"
 	"strings"
 	"unicode/utf8"
+
+	"example.com/holdtime/examples/position"
 )
 
 // history is what the joint goes through: rows in the order of time, temperatures linear in time between them.
@@ -23,7 +26,7 @@ type row struct {
 	bolt, flange float64 // [K]
 	retighten    target
 	remark       string
-	where        map[string]place // of each cell, for faults found later
+	where        map[string]position.Place // of each cell, for faults found later
 }
 
 // target is the clamp load of the joint that a retightening restores.
@@ -65,13 +68,6 @@ func (h *history) retightenings() []int {
 	return list
 }
 
-// place is a line and a column of characters, both counted from 1.
-type place struct{ line, column int }
-
-func (s *source) faultAt(p place, format string, args ...any) error {
-	return &inputError{s.name, p.line, p.column, fmt.Sprintf(format, args...)}
-}
-
 // unit turns the number of a cell into the program's units: add, then multiply.
 type unit struct{ add, multiply float64 }
 
@@ -99,13 +95,13 @@ type header struct {
 	unit []string
 }
 
-// readHistory reads the history file. Its faults are inputErrors.
-func readHistory(src *source) (*history, error) {
-	r := &historyReader{src: src, csv: csv.NewReader(bytes.NewReader(src.text)), lines: lineStarts(src.text)}
+// readHistory reads the history file. Its faults are of type *position.Error.
+func readHistory(src *position.Source) (*history, error) {
+	r := &historyReader{src: src, csv: csv.NewReader(bytes.NewReader(src.Text)), lines: lineStarts(src.Text)}
 	r.csv.Comment, r.csv.FieldsPerRecord, r.csv.TrimLeadingSpace = '#', -1, true
 	cells, err := r.next()
 	if err == io.EOF {
-		return nil, src.fault(len(src.text), "no header; expected the columns %s", columnsWanted)
+		return nil, src.Fault(len(src.Text), "no header; expected the columns %s", columnsWanted)
 	}
 	if err != nil {
 		return nil, err
@@ -129,13 +125,13 @@ func readHistory(src *source) (*history, error) {
 		h.rows = append(h.rows, next)
 	}
 	if len(h.rows) < 2 {
-		return nil, src.fault(len(src.text), "the history has %d rows, must have at least 2", len(h.rows))
+		return nil, src.Fault(len(src.Text), "the history has %d rows, must have at least 2", len(h.rows))
 	}
 	return h, nil
 }
 
 type historyReader struct {
-	src   *source
+	src   *position.Source
 	csv   *csv.Reader
 	lines []int // byte offset of each line
 	header
@@ -157,24 +153,24 @@ func (r *historyReader) next() ([]string, error) {
 	var wrong *csv.ParseError
 	if errors.As(err, &wrong) {
 		if wrong.StartLine < wrong.Line {
-			return nil, r.src.faultAt(place{wrong.StartLine, 1}, "a quotation mark opened in this line is not closed")
+			return nil, r.src.FaultAt(position.Place{Line: wrong.StartLine, Column: 1}, "a quotation mark opened in this line is not closed")
 		}
-		return nil, r.src.faultAt(r.characters(wrong.Line, wrong.Column), "not CSV: %v", wrong.Err)
+		return nil, r.src.FaultAt(r.characters(wrong.Line, wrong.Column), "not CSV: %v", wrong.Err)
 	}
 	return cells, err
 }
 
 // characters turns the reader's byte column into a column of characters, no further than the end of the line: the reader
 // also counts what it looked for behind it.
-func (r *historyReader) characters(line, column int) place {
-	text := r.src.text[r.lines[min(line, len(r.lines))-1]:]
+func (r *historyReader) characters(line, column int) position.Place {
+	text := r.src.Text[r.lines[min(line, len(r.lines))-1]:]
 	if end := bytes.IndexByte(text, '\n'); end >= 0 {
 		text = text[:end]
 	}
-	return place{line, 1 + utf8.RuneCount(text[:min(column-1, len(text))])}
+	return position.Place{Line: line, Column: 1 + utf8.RuneCount(text[:min(column-1, len(text))])}
 }
 
-func (r *historyReader) place(i int) place { return r.characters(r.csv.FieldPos(i)) }
+func (r *historyReader) place(i int) position.Place { return r.characters(r.csv.FieldPos(i)) }
 
 func (r *historyReader) readHeader(cells []string) error {
 	for i, cell := range cells {
@@ -183,23 +179,23 @@ func (r *historyReader) readHeader(cells []string) error {
 		unit := strings.TrimSpace(strings.TrimSuffix(strings.TrimSpace(rest), "]"))
 		kind, known := columns[name]
 		if strings.Contains(cell, ";") {
-			return r.src.faultAt(r.place(i), "the columns must be separated by commas, not semicolons")
+			return r.src.FaultAt(r.place(i), "the columns must be separated by commas, not semicolons")
 		}
 		if !known {
-			return r.src.faultAt(r.place(i), "no column is called %q; expected %s", name, columnsWanted)
+			return r.src.FaultAt(r.place(i), "no column is called %q; expected %s", name, columnsWanted)
 		}
-		if contains(r.name, name) {
-			return r.src.faultAt(r.place(i), "the column %q is given twice", name)
+		if slices.Contains(r.name, name) {
+			return r.src.FaultAt(r.place(i), "the column %q is given twice", name)
 		}
 		if _, ok := kind.units[unit]; !ok && kind.units != nil || bracketed && kind.units == nil {
-			return r.src.faultAt(r.place(i), "the column %q needs a unit it can have, as in %s; it has %q", name, columnsWanted,
+			return r.src.FaultAt(r.place(i), "the column %q needs a unit it can have, as in %s; it has %q", name, columnsWanted,
 				unit)
 		}
 		r.name, r.unit = append(r.name, name), append(r.unit, unit)
 	}
 	for _, name := range []string{"time", "bolt", "flange"} {
-		if !contains(r.name, name) {
-			return r.src.faultAt(r.place(0), "the column %q is missing; expected %s", name, columnsWanted)
+		if !slices.Contains(r.name, name) {
+			return r.src.FaultAt(r.place(0), "the column %q is missing; expected %s", name, columnsWanted)
 		}
 	}
 	return nil
@@ -207,23 +203,23 @@ func (r *historyReader) readHeader(cells []string) error {
 
 func (r *historyReader) readRow(cells []string, h *history) (row, error) {
 	if len(cells) != len(r.name) {
-		return row{}, r.src.faultAt(r.place(min(len(cells), len(r.name)+1)-1), "%d cells, the header has %d columns; "+
+		return row{}, r.src.FaultAt(r.place(min(len(cells), len(r.name)+1)-1), "%d cells, the header has %d columns; "+
 			"cells are separated by commas, decimals by points", len(cells), len(r.name))
 	}
-	next := row{where: make(map[string]place, len(cells))}
+	next := row{where: make(map[string]position.Place, len(cells))}
 	for i, cell := range cells {
 		cell = strings.TrimSpace(cell)
 		next.where[r.name[i]] = r.place(i)
 		if err := next.set(r.name[i], r.unit[i], cell); err != nil {
-			return row{}, r.src.faultAt(r.place(i), "%s: %v", r.name[i], err)
+			return row{}, r.src.FaultAt(r.place(i), "%s: %v", r.name[i], err)
 		}
 	}
 	if n := len(h.rows); n > 0 && !(next.time > h.rows[n-1].time) {
-		return row{}, r.src.faultAt(next.where["time"], "time: %v h is not after the row before, %v h", next.time,
+		return row{}, r.src.FaultAt(next.where["time"], "time: %v h is not after the row before, %v h", next.time,
 			h.rows[n-1].time)
 	}
 	if len(h.rows) == 0 && next.retighten.wanted() {
-		return row{}, r.src.faultAt(next.where["retighten"],
+		return row{}, r.src.FaultAt(next.where["retighten"],
 			"retighten: the first row is the assembly, which is tightened to the preload of the joint file")
 	}
 	return next, nil
@@ -272,15 +268,15 @@ func (w *row) set(name, unit, cell string) error {
 
 // match holds the history against the joint: every temperature must be covered by the tables, every load be one that bolts
 // can carry without leaving small strains.
-func match(j *joint, h *history, src *source, jointName string) error {
+func match(j *joint, h *history, src *position.Source, jointName string) error {
 	for i := range h.rows {
 		w := &h.rows[i]
 		bolt, flange := j.untabulated(w.bolt, w.flange)
 		if bolt != "" {
-			return src.faultAt(w.where["bolt"], "bolt: %.6g °C is outside the table %s of %s", w.bolt-icePoint, bolt, jointName)
+			return src.FaultAt(w.where["bolt"], "bolt: %.6g °C is outside the table %s of %s", w.bolt-icePoint, bolt, jointName)
 		}
 		if flange != "" {
-			return src.faultAt(w.where["flange"], "flange: %.6g °C is outside the table %s of %s", w.flange-icePoint, flange,
+			return src.FaultAt(w.where["flange"], "flange: %.6g °C is outside the table %s of %s", w.flange-icePoint, flange,
 				jointName)
 		}
 		load, cell := j.preload, "bolt" // the assembly is judged in the first row
@@ -290,7 +286,7 @@ func match(j *joint, h *history, src *source, jointName string) error {
 			continue
 		}
 		if stress, name, over := j.overstressed(load, w.bolt); over {
-			return src.faultAt(w.where[cell], "a clamp load of %.6g kN makes %.4g MPa in the section %q: more than %v of elastic "+
+			return src.FaultAt(w.where[cell], "a clamp load of %.6g kN makes %.4g MPa in the section %q: more than %v of elastic "+
 				"strain", load/newtonPerKilonewton, stress, name, largestElasticStrain)
 		}
 	}

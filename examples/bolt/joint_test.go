@@ -5,9 +5,11 @@ import (
 	"math"
 	"testing"
 
-	"example.com/holdtime/bench/check"
 	"github.com/stretchr/testify/assert"
 	"github.com/stretchr/testify/require"
+
+	"example.com/holdtime/bench/check"
+	"example.com/holdtime/examples/position"
 )
 
 // The joint of published-value 1.4: E = 150000 MPa, Norton with A = 1e-16, n = 5, 200 MPa at the start, one section with
@@ -20,14 +22,14 @@ const followUpJoint = `{"title": "x", "expansion_reference_K": 300, "preload_kN"
 
 func mustJoint(t *testing.T, text string) *joint {
 	t.Helper()
-	j, err := readJoint(newSource("joint.json", []byte(text)))
+	j, err := readJoint(position.NewSource("joint.json", []byte(text)))
 	require.NoError(t, err)
 	return j
 }
 
 func mustHistory(t *testing.T, text string) *history {
 	t.Helper()
-	h, err := readHistory(newSource("history.csv", []byte(text)))
+	h, err := readHistory(position.NewSource("history.csv", []byte(text)))
 	require.NoError(t, err)
 	return h
 }

@@ -5,6 +5,8 @@ import (
 	"fmt"
 	"math"
 
+	"example.com/holdtime/examples/jsontree"
+	"example.com/holdtime/examples/position"
 	"example.com/holdtime/integrate"
 )
 
@@ -22,9 +24,9 @@ var (
 
 const newtonPerKilonewton = 1000
 
-// readJoint reads the joint file. Its faults are inputErrors.
-func readJoint(src *source) (*joint, error) {
-	root, err := tree(src)
+// readJoint reads the joint file. Its faults are of type *position.Error.
+func readJoint(src *position.Source) (*joint, error) {
+	root, err := jsontree.Read(src)
 	if err != nil {
 		return nil, err
 	}
@@ -44,7 +46,7 @@ func readJoint(src *source) (*joint, error) {
 		j.flange.gasket = g.number("stiffness_per_bolt_kN_per_mm", stiffnessLimit) * newtonPerKilonewton
 	}
 	if r.err == nil && !(j.required < j.preload) {
-		r.fault(o.find("required_kN").offset, "required_kN is %v, must be below preload_kN, %v",
+		r.fault(o.find("required_kN").Offset, "required_kN is %v, must be below preload_kN, %v",
 			j.required/newtonPerKilonewton, j.preload/newtonPerKilonewton)
 	}
 	if r.err != nil {
@@ -59,17 +61,17 @@ func (o object) remarks() {
 		return
 	}
 	for i, n := range o.list("remarks") {
-		if n.kind != isText {
-			o.fault(n.offset, "remarks[%d] must be %s, not %s", i, isText, n.kind)
+		if n.Kind != jsontree.Text {
+			o.fault(n.Offset, "remarks[%d] must be %s, not %s", i, jsontree.Text, n.Kind)
 		}
 	}
 }
 
-func (j *joint) readBolts(r *reading, n *node, reference float64) {
+func (j *joint) readBolts(r *reading, n *jsontree.Node, reference float64) {
 	o := r.object(n, "bolts", "count", "thread_pitch_mm", "sections", "young_MPa", "poisson", "expansion_per_K", "law")
 	count := o.number("count", countLimit)
 	if j.count = int(count); r.err == nil && float64(j.count) != count {
-		r.fault(o.find("count").offset, "bolts.count is %v, must be %s", count, countLimit.want)
+		r.fault(o.find("count").Offset, "bolts.count is %v, must be %s", count, countLimit.want)
 	}
 	j.pitch = o.number("thread_pitch_mm", lengthLimit)
 	for i, item := range o.list("sections") {
@@ -88,11 +90,11 @@ func (j *joint) readBolts(r *reading, n *node, reference float64) {
 	j.bolt, err = integrate.New(integrate.Isotropic{Young: j.young, Poisson: j.poisson}, law,
 		integrate.Options{Expansion: j.growth})
 	if err != nil { // everything has been checked above, so this names the whole
-		r.fault(n.offset, "bolts: %v", err)
+		r.fault(n.Offset, "bolts: %v", err)
 	}
 }
 
-func (j *joint) readFlange(r *reading, n *node, reference float64) {
+func (j *joint) readFlange(r *reading, n *jsontree.Node, reference float64) {
 	o := r.object(n, "flange", "stiffness_per_bolt_kN_per_mm", "expansion_per_K")
 	j.flange.stiffness = o.property("stiffness_per_bolt_kN_per_mm", stiffnessLimit, newtonPerKilonewton)
 	j.flange.growth = integrate.Expansion{Mean: o.property("expansion_per_K", expansionLimit, 1), Reference: reference}
@@ -105,7 +107,7 @@ func (o object) property(name string, l limit, scale float64) integrate.Table {
 		return integrate.Table{}
 	}
 	path := o.path + "." + name
-	if n.kind != isObject {
+	if n.Kind != jsontree.Object {
 		return integrate.Constant(o.value(n, path, l) * scale)
 	}
 	t := o.object(n, path, "temperature_C", "temperature_K", "value")
@@ -113,7 +115,7 @@ func (o object) property(name string, l limit, scale float64) integrate.Table {
 	if t.find("temperature_K") != nil {
 		axis, shift, tl = "temperature_K", 0, kelvinLimit
 		if c := t.find("temperature_C"); c != nil {
-			o.fault(c.offset, "%s: give temperature_C or temperature_K, not both", path)
+			o.fault(c.Offset, "%s: give temperature_C or temperature_K, not both", path)
 		}
 	}
 	at, temperatures := t.numbers(axis, tl)
@@ -128,7 +130,7 @@ func (o object) property(name string, l limit, scale float64) integrate.Table {
 		return integrate.Table{}
 	}
 	if len(at) != len(values) || len(at) < 2 {
-		o.fault(n.offset, "%s has %d temperatures and %d values, must have as many of both, at least two", path, len(at),
+		o.fault(n.Offset, "%s has %d temperatures and %d values, must have as many of both, at least two", path, len(at),
 			len(values))
 		return integrate.Table{}
 	}
@@ -136,13 +138,13 @@ func (o object) property(name string, l limit, scale float64) integrate.Table {
 	var wrong *integrate.TableError
 	if errors.As(err, &wrong) { // lengths and values are in order, so it is a temperature
 		row := at[wrong.Row]
-		o.fault(row.offset, "%s.%s[%d] is %s, must be above the one before it", path, axis, wrong.Row, row.text)
+		o.fault(row.Offset, "%s.%s[%d] is %s, must be above the one before it", path, axis, wrong.Row, row.Text)
 	}
 	return table
 }
 
 // numbers reads a list of numbers.
-func (o object) numbers(name string, l limit) ([]*node, []float64) {
+func (o object) numbers(name string, l limit) ([]*jsontree.Node, []float64) {
 	items := o.list(name)
 	values := make([]float64, len(items))
 	for i, n := range items {

@@ -3,8 +3,12 @@ package main
 import (
 	"fmt"
 	"math"
+	"slices"
 	"strconv"
 	"strings"
+
+	"example.com/holdtime/examples/jsontree"
+	"example.com/holdtime/examples/position"
 )
 
 // object takes the fields out of one JSON object. The first fault is kept in report and makes every later reading return
@@ -12,46 +16,37 @@ import (
 type object struct {
 	*reading
 	path string // what the object is called in messages, such as "bolts.law"
-	node *node
+	node *jsontree.Node
 }
 
 // reading is what all objects of one file share.
 type reading struct {
-	src *source
+	src *position.Source
 	err error
 }
 
 func (r *reading) fault(offset int, format string, args ...any) {
 	if r.err == nil {
-		r.err = r.src.fault(offset, format, args...)
+		r.err = r.src.Fault(offset, format, args...)
 	}
 }
 
 // object opens a node as an object with the given fields and no others.
-func (r *reading) object(n *node, path string, known ...string) object {
+func (r *reading) object(n *jsontree.Node, path string, known ...string) object {
 	o := object{r, path, n}
 	if n == nil { // an earlier fault
-		return object{r, path, &node{}}
+		return object{r, path, &jsontree.Node{}}
 	}
-	if n.kind != isObject {
-		r.fault(n.offset, "%s must be %s, not %s", path, isObject, n.kind)
-		return object{r, path, &node{}}
+	if n.Kind != jsontree.Object {
+		r.fault(n.Offset, "%s must be %s, not %s", path, jsontree.Object, n.Kind)
+		return object{r, path, &jsontree.Node{}}
 	}
-	for _, f := range n.fields {
-		if !contains(known, f.name) {
-			r.fault(f.offset, "%s has no field %q; its fields are %s", path, f.name, strings.Join(known, ", "))
+	for _, f := range n.Fields {
+		if !slices.Contains(known, f.Name) {
+			r.fault(f.Offset, "%s has no field %q; its fields are %s", path, f.Name, strings.Join(known, ", "))
 		}
 	}
 	return o
-}
-
-func contains(list []string, s string) bool {
-	for _, x := range list {
-		if x == s {
-			return true
-		}
-	}
-	return false
 }
 
 // called is a field's name in messages.
@@ -66,20 +61,20 @@ func (o object) called(name string) string {
 const wholeFile = "the joint"
 
 // find returns a field's value, nil if it is not there.
-func (o object) find(name string) *node {
-	for _, f := range o.node.fields {
-		if f.name == name {
-			return f.value
+func (o object) find(name string) *jsontree.Node {
+	for _, f := range o.node.Fields {
+		if f.Name == name {
+			return f.Value
 		}
 	}
 	return nil
 }
 
 // must returns a field's value, which has to be there.
-func (o object) must(name string) *node {
+func (o object) must(name string) *jsontree.Node {
 	n := o.find(name)
 	if n == nil {
-		o.fault(o.node.offset, "%s: the field %q is missing", o.path, name)
+		o.fault(o.node.Offset, "%s: the field %q is missing", o.path, name)
 	}
 	return n
 }
@@ -93,24 +88,24 @@ func (o object) text(name string, optional bool) string {
 	if n = o.must(name); n == nil {
 		return ""
 	}
-	if n.kind != isText {
-		o.fault(n.offset, "%s must be %s, not %s", o.called(name), isText, n.kind)
+	if n.Kind != jsontree.Text {
+		o.fault(n.Offset, "%s must be %s, not %s", o.called(name), jsontree.Text, n.Kind)
 	}
-	return n.text
+	return n.Text
 }
 
 // list reads a list with at least one item.
-func (o object) list(name string) []*node {
+func (o object) list(name string) []*jsontree.Node {
 	n := o.must(name)
 	if n == nil {
 		return nil
 	}
-	if n.kind != isArray {
-		o.fault(n.offset, "%s must be %s, not %s", o.called(name), isArray, n.kind)
-	} else if len(n.items) == 0 {
-		o.fault(n.offset, "%s is empty", o.called(name))
+	if n.Kind != jsontree.List {
+		o.fault(n.Offset, "%s must be %s, not %s", o.called(name), jsontree.List, n.Kind)
+	} else if len(n.Items) == 0 {
+		o.fault(n.Offset, "%s is empty", o.called(name))
 	}
-	return n.items
+	return n.Items
 }
 
 // limit is what a number must be: above (or at) low and below (or at) high, and why.
@@ -124,10 +119,7 @@ func (l limit) holds(x float64) bool {
 	return (x > l.low || x == l.low && !l.open) && x <= l.high
 }
 
-var (
-	positive = limit{0, math.MaxFloat64, true, "above 0"}
-	anything = limit{-math.MaxFloat64, math.MaxFloat64, false, "a number"}
-)
+var anything = limit{-math.MaxFloat64, math.MaxFloat64, false, "a number"}
 
 // number reads one number.
 func (o object) number(name string, l limit) float64 {
@@ -135,21 +127,21 @@ func (o object) number(name string, l limit) float64 {
 }
 
 // value reads a node as a number within a limit.
-func (r *reading) value(n *node, path string, l limit) float64 {
+func (r *reading) value(n *jsontree.Node, path string, l limit) float64 {
 	if n == nil || r.err != nil {
 		return 0
 	}
-	if n.kind != isNumber {
-		r.fault(n.offset, "%s must be %s, not %s", path, isNumber, n.kind)
+	if n.Kind != jsontree.Number {
+		r.fault(n.Offset, "%s must be %s, not %s", path, jsontree.Number, n.Kind)
 		return 0
 	}
-	x, err := strconv.ParseFloat(n.text, 64)
+	x, err := strconv.ParseFloat(n.Text, 64)
 	if err != nil {
-		r.fault(n.offset, "%s is %s, which is outside the range of floating-point numbers", path, n.text)
+		r.fault(n.Offset, "%s is %s, which is outside the range of floating-point numbers", path, n.Text)
 		return 0
 	}
 	if !l.holds(x) {
-		r.fault(n.offset, "%s is %s, must be %s", path, n.text, l.want)
+		r.fault(n.Offset, "%s is %s, must be %s", path, n.Text, l.want)
 		return 0
 	}
 	return x
@@ -160,13 +152,13 @@ func (o object) temperature(name string) float64 {
 	c, k := o.find(name+"_C"), o.find(name+"_K")
 	switch {
 	case c != nil && k != nil:
-		o.fault(k.offset, "%s: give %s_C or %s_K, not both", o.path, name, name)
+		o.fault(k.Offset, "%s: give %s_C or %s_K, not both", o.path, name, name)
 	case c != nil:
 		return o.value(c, o.called(name+"_C"), celsiusLimit) + icePoint
 	case k != nil:
 		return o.value(k, o.called(name+"_K"), kelvinLimit)
 	default:
-		o.fault(o.node.offset, "%s: the field %q or %q is missing", o.path, name+"_C", name+"_K")
+		o.fault(o.node.Offset, "%s: the field %q or %q is missing", o.path, name+"_C", name+"_K")
 	}
 	return 0
 }

@@ -7,22 +7,23 @@ import (
 	"strings"
 
 	"example.com/holdtime/creeplaw"
+	"example.com/holdtime/examples/jsontree"
 )
 
 // readLaw reads a creep law. Its "kind" says which fields belong to it; stresses are in MPa, times in h.
-func readLaw(r *reading, n *node, path string) creeplaw.Law {
+func readLaw(r *reading, n *jsontree.Node, path string) creeplaw.Law {
 	if n == nil || r.err != nil {
 		return nil
 	}
-	if n.kind != isObject {
-		r.fault(n.offset, "%s must be %s, not %s", path, isObject, n.kind)
+	if n.Kind != jsontree.Object {
+		r.fault(n.Offset, "%s must be %s, not %s", path, jsontree.Object, n.Kind)
 		return nil
 	}
 	o := object{r, path, n}
 	name := o.text("kind", false)
 	read, ok := lawKinds()[name]
 	if r.err == nil && !ok {
-		r.fault(o.find("kind").offset, "%s.kind %q is not known; there are %s", path, name, strings.Join(lawNames(), ", "))
+		r.fault(o.find("kind").Offset, "%s.kind %q is not known; there are %s", path, name, strings.Join(lawNames(), ", "))
 	}
 	if r.err != nil {
 		return nil
@@ -40,13 +41,13 @@ func (o object) culprit(err error) int {
 	var wrong *creeplaw.ParameterError
 	if errors.As(err, &wrong) {
 		prefix := strings.ReplaceAll(wrong.Parameter, " ", "_")
-		for _, f := range o.node.fields {
-			if strings.HasPrefix(f.name, prefix) {
-				return f.value.offset
+		for _, f := range o.node.Fields {
+			if strings.HasPrefix(f.Name, prefix) {
+				return f.Value.Offset
 			}
 		}
 	}
-	return o.node.offset
+	return o.node.Offset
 }
 
 // lawReader builds a law from the fields of an object; the constructors of the library judge the values.

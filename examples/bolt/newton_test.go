@@ -1,27 +1,16 @@
 package main
 
 import (
-	"math"
 	"strings"
 	"testing"
 
 	"github.com/stretchr/testify/assert"
 	"github.com/stretchr/testify/require"
+
+	"example.com/holdtime/examples/newton"
 )
 
 func replaceFirst(text, old, new string) string { return strings.Replace(text, old, new, 1) }
-
-// order is how fast a residual sequence converges at its end, from its last three values that are above rounding: 2 for
-// Newton's method with the right tangent, 1 with a wrong one.
-func order(t *testing.T, residuals []float64) float64 {
-	const rounding = 1e-13
-	for len(residuals) > 0 && residuals[len(residuals)-1] < rounding {
-		residuals = residuals[:len(residuals)-1]
-	}
-	require.GreaterOrEqual(t, len(residuals), 3, "too few residuals above rounding: %v", residuals)
-	r := residuals[len(residuals)-3:]
-	return math.Log(r[2]/r[1]) / math.Log(r[1]/r[0])
-}
 
 // The built-in example, with one solve over thousands of hours in which a third of the load relaxes.
 func TestGlobalNewtonIsQuadratic(t *testing.T) {
@@ -38,7 +27,9 @@ func TestGlobalNewtonIsQuadratic(t *testing.T) {
 	assert.True(t, single.to-single.from > 7000)
 	assert.LessOrEqual(t, len(single.residuals)-1, 6)
 	// Measured: order 1.98; below 1.8 something in the tangent is wrong.
-	assert.True(t, order(t, single.residuals) > 1.8, "residuals %.2g", single.residuals)
+	order, ok := newton.Order(single.residuals, 1e-13)
+	require.True(t, ok, "too few residuals above rounding: %v", single.residuals)
+	assert.True(t, order > 1.8, "residuals %.2g", single.residuals)
 }
 
 // One step from 200 MPa over times from which next to nothing to nearly everything relaxes, for every kind of law.

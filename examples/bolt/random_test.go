@@ -12,6 +12,8 @@ import (
 
 	"github.com/stretchr/testify/assert"
 	"github.com/stretchr/testify/require"
+
+	"example.com/holdtime/examples/position"
 )
 
 var campaign = flag.Bool("campaign", false, "run the long random tests")
@@ -30,8 +32,8 @@ func TestRandomJoints(t *testing.T) {
 	for i := range runs {
 		decades := 0.02 * math.Pow(100, rng.Float64()) // 5 % … two decades
 		text := disturbed(t, rng, decades)
-		j, err := readJoint(newSource("joint.json", text))
-		src := newSource("history.csv", defaultHistory)
+		j, err := readJoint(position.NewSource("joint.json", text))
+		src := position.NewSource("history.csv", defaultHistory)
 		h := mustHistory(t, string(defaultHistory))
 		if err != nil || match(j, h, src, "joint.json") != nil {
 			continue // refused, which the fuzz target looks after

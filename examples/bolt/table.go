@@ -4,29 +4,15 @@ import (
 	"fmt"
 	"io"
 	"math"
-	"strconv"
 	"strings"
-)
 
-// grouped writes a number with a blank between thousands.
-func grouped(x float64, decimals int) string {
-	s := strconv.FormatFloat(x, 'f', decimals, 64)
-	whole, rest, _ := strings.Cut(strings.TrimPrefix(s, "-"), ".")
-	for i := len(whole) - 3; i > 0; i -= 3 {
-		whole = whole[:i] + " " + whole[i:]
-	}
-	if rest != "" {
-		whole += "." + rest
-	}
-	if strings.HasPrefix(s, "-") && strings.Trim(s, "-0.") != "" {
-		return "-" + whole
-	}
-	return whole
-}
+	"example.com/holdtime/examples/figure"
+	"example.com/holdtime/examples/newton"
+)
 
 // kilonewton writes the clamp load of the joint for a load of one bolt.
 func (p *report) kilonewton(perBolt float64) string {
-	return grouped(perBolt*float64(p.joint.count)/newtonPerKilonewton, 0)
+	return figure.Grouped(perBolt*float64(p.joint.count)/newtonPerKilonewton, 0)
 }
 
 // hours writes a time, with decimals where the history is short.
@@ -35,7 +21,7 @@ func (p *report) hours(time float64) string {
 	if p.history.end()-p.history.start() < 1000 {
 		decimals = 2
 	}
-	return grouped(time, decimals)
+	return figure.Grouped(time, decimals)
 }
 
 // percent of the preload.
@@ -69,7 +55,7 @@ func (p *report) writeJoint(w io.Writer) {
 func (p *report) writeStiffness(w io.Writer, when string, c condition) {
 	k, _ := p.joint.flange.compliance(c.flange)
 	fmt.Fprintf(w, "%s: one bolt %s kN/mm, its share of the joint %s kN/mm, elastic follow-up Z = %.3f\n", when,
-		grouped(1/p.joint.boltCompliance(c.bolt)/newtonPerKilonewton, 0), grouped(1/k/newtonPerKilonewton, 0),
+		figure.Grouped(1/p.joint.boltCompliance(c.bolt)/newtonPerKilonewton, 0), figure.Grouped(1/k/newtonPerKilonewton, 0),
 		p.joint.followUp(c.bolt, c.flange))
 }
 
@@ -84,13 +70,13 @@ func (p *report) writeTable(w io.Writer) {
 		if !s.stop {
 			continue
 		}
-		writeLine(w, line, p.hours(s.time), grouped(s.bolt-icePoint, 0), grouped(s.flange-icePoint, 0),
-			p.kilonewton(s.load), grouped(p.percent(s.load), 1), grouped(s.points[thin].stress, 1),
-			grouped(100*s.points[thin].state.Equivalent, 4), s.event)
+		writeLine(w, line, p.hours(s.time), figure.Grouped(s.bolt-icePoint, 0), figure.Grouped(s.flange-icePoint, 0),
+			p.kilonewton(s.load), figure.Grouped(p.percent(s.load), 1), figure.Grouped(s.points[thin].stress, 1),
+			figure.Grouped(100*s.points[thin].state.Equivalent, 4), s.event)
 	}
 	peak := p.peak(thin)
 	fmt.Fprintf(w, "\nHighest bolt stress %s MPa at %s h. The model has no plasticity: hold it against the yield strength.\n",
-		grouped(peak.points[thin].stress, 0), p.hours(peak.time))
+		figure.Grouped(peak.points[thin].stress, 0), p.hours(peak.time))
 	if p.opened != nil {
 		fmt.Fprintf(w, "\n%v. The table ends there.\n", p.opened)
 	}
@@ -173,17 +159,9 @@ func (p *report) writeEffort(w io.Writer) {
 		p.uncertainty*float64(p.joint.count)/newtonPerKilonewton, p.percent(p.uncertainty))
 	fmt.Fprintf(w, "Global Newton with the library's tangent, %d unknowns: %d solves, %.2f iterations in the mean, %d at worst; "+
 		"largest scaled residual there: %s\n", 2*len(p.joint.sections)+2, e.solves,
-		float64(e.iterations)/math.Max(1, float64(e.solves)), len(e.worst)-1, residualList(e.worst))
+		float64(e.iterations)/math.Max(1, float64(e.solves)), len(e.worst)-1, newton.Text(e.worst, ", "))
 	if s := c.single; s.residuals != nil {
 		fmt.Fprintf(w, "All of %s h to %s h as one single step, to show the iteration: %s\n", p.hours(s.from), p.hours(s.to),
-			residualList(s.residuals))
+			newton.Text(s.residuals, ", "))
 	}
-}
-
-func residualList(residuals []float64) string {
-	var words []string
-	for _, r := range residuals {
-		words = append(words, strconv.FormatFloat(r, 'e', 1, 64))
-	}
-	return strings.Join(words, ", ")
 }

@@ -5,9 +5,10 @@ import (
 	"fmt"
 	"math"
 
+	"gonum.org/v1/gonum/mat"
+
 	"example.com/holdtime/integrate"
 	"example.com/holdtime/tensor"
-	"gonum.org/v1/gonum/mat"
 )
 
 // body is a mesh of bricks of one material.

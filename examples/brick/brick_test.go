@@ -5,10 +5,12 @@ import (
 	"sync"
 	"testing"
 
-	"example.com/holdtime/bench/check"
-	"example.com/holdtime/tensor"
 	"github.com/stretchr/testify/assert"
 	"github.com/stretchr/testify/require"
+
+	"example.com/holdtime/bench/check"
+	"example.com/holdtime/examples/newton"
+	"example.com/holdtime/tensor"
 )
 
 // builtIn is the report that the program makes without flags, made once for all tests.
@@ -76,28 +78,13 @@ func TestGlobalNewtonIsQuadratic(t *testing.T) {
 	seen := 0
 	for _, residuals := range append(r.askew, r.strainedWorst, r.tension[0].worst) {
 		assert.LessOrEqual(t, len(residuals)-1, 8, "%.1e", residuals)
-		if o, ok := order(residuals); ok {
+		if o, ok := newton.Order(residuals, solved); ok {
 			seen++
 			assert.True(t, o > 1.9, "order %v of %.1e", o, residuals) // measured 1.96 to 2.03
 		}
 	}
 	assert.GreaterOrEqual(t, seen, 4, "sequences long enough")
 	assert.True(t, r.constant() < 20, "r(k+1)/r(k)² is %v", r.constant()) // measured 8
-}
-
-func TestOrderOfASequence(t *testing.T) {
-	o, ok := order([]float64{1, 1e-2, 1e-4, 1e-8, 1e-16})
-	require.True(t, ok)
-	check.Abs(t, "quadratic", o, 2, 1e-12)
-	o, ok = order([]float64{1e-2, 1e-3, 1e-4, 1e-5})
-	require.True(t, ok)
-	check.Abs(t, "linear", o, 1, 1e-12)
-	assert.True(t, constant([]float64{1e-2, 5e-3, 2e-3, 1e-3, 5e-6}) > 100)
-	_, ok = order([]float64{1, 1e-16})
-	assert.False(t, ok)
-	assert.False(t, outcome{value: math.NaN(), limit: 1}.passed())
-	assert.False(t, outcome{value: math.NaN(), limit: 1, atLeast: true}.passed())
-	assert.False(t, outcome{value: 2, limit: 1}.passed())
 }
 
 // The stiffness against central differences of the internal forces, in a step with creep in which no two points are alike.
@@ -204,6 +191,6 @@ func TestOtherSettings(t *testing.T) {
 	for _, s := range []settings{{1, 1, 8}, {3, 0, 8}, {8, 0.5, 8}} {
 		r, err := newReport(s)
 		require.NoError(t, err)
-		assert.True(t, r.passed(), "%+v: %+v", s, r.outcomes)
+		assert.True(t, r.checks.Passed(), "%+v: %+v", s, r.checks)
 	}
 }

@@ -7,20 +7,12 @@
 package main
 
 import (
-	"errors"
 	"flag"
 	"fmt"
 	"io"
 	"os"
-	"path/filepath"
-	"runtime"
-)
 
-// Exit statuses.
-const (
-	done    = 0
-	failed  = 1
-	refused = 2 // flags
+	"example.com/holdtime/examples/commandline"
 )
 
 func main() { os.Exit(command(os.Args[1:], os.Stdout, os.Stderr)) }
@@ -49,91 +41,49 @@ type options struct {
 
 func parse(args []string, stdout, stderr io.Writer) (options, error) {
 	var o options
-	set := flag.NewFlagSet("brick", flag.ContinueOnError)
-	set.SetOutput(stderr)
-	set.Usage = func() {} // a mistyped flag is told in one line
+	usage := commandline.Usage{Name: "brick", Help: helpText, Shows: "its flags", Inputs: ", and there are no input files"}
+	err := usage.Parse(args, stdout, stderr, o.define, o.check)
+	return o, err
+}
+
+func (o *options) define(set *flag.FlagSet) {
 	set.StringVar(&o.out, "out", "", "`folder` for brick.png and brick.svg; out beside the source of the example if empty")
 	set.Float64Var(&o.exponent, "exponent", 5, "stress `exponent` of Norton's law, 1 to 8")
 	set.Float64Var(&o.distortion, "distortion", 1, "`share` of the built-in distortion, 0 (a cube) to 1")
 	set.IntVar(&o.steps, "steps", 16,
 		"time `steps` in a hold or in the heating, 8 to 64; studies of the error double it several times")
-	err := set.Parse(args)
+}
+
+func (o *options) check() error {
 	switch {
-	case errors.Is(err, flag.ErrHelp):
-		fmt.Fprint(stdout, helpText)
-		set.SetOutput(stdout)
-		set.PrintDefaults()
-		return o, err
-	case err != nil:
-		err = errors.New("brick: run it with -h for its flags") // the flag itself has been named
-	case set.NArg() > 0:
-		err = fmt.Errorf("brick: %q is not a flag, and there are no input files", set.Arg(0))
 	case !(o.exponent >= 1 && o.exponent <= 8):
-		err = fmt.Errorf("brick: -exponent is %v, must be between 1 and 8", o.exponent)
+		return fmt.Errorf("-exponent is %v, must be between 1 and 8", o.exponent)
 	case !(o.distortion >= 0 && o.distortion <= 1):
-		err = fmt.Errorf("brick: -distortion is %v, must be between 0 and 1", o.distortion)
+		return fmt.Errorf("-distortion is %v, must be between 0 and 1", o.distortion)
 	case o.steps < 8 || o.steps > 64:
-		err = fmt.Errorf("brick: -steps is %v, must be between 8 and 64", o.steps)
+		return fmt.Errorf("-steps is %v, must be between 8 and 64", o.steps)
 	}
-	if err != nil {
-		fmt.Fprintln(stderr, err)
-	}
-	return o, err
+	return nil
 }
 
 // command is the program but for its exit.
 func command(args []string, stdout, stderr io.Writer) int {
 	o, err := parse(args, stdout, stderr)
-	if errors.Is(err, flag.ErrHelp) {
-		return done
-	}
 	if err != nil {
-		return refused
+		return commandline.Status(err)
 	}
 	r, err := newReport(o.settings)
 	if err != nil {
-		fmt.Fprintf(stderr, "brick: %v\n", err)
-		return failed
+		return commandline.Fail(stderr, "brick: %v", err)
 	}
 	r.write(stdout)
-	paths, err := r.draw(o.folder())
+	paths, err := r.draw(commandline.OutputFolder(o.out, "", commandline.SourceFolder()))
 	if err != nil {
-		fmt.Fprintf(stderr, "brick: the picture was not drawn: %v\n", err)
-		return failed
+		return commandline.Fail(stderr, "brick: the picture was not drawn: %v", err)
 	}
-	fmt.Fprintln(stdout)
-	for _, path := range paths {
-		fmt.Fprintf(stdout, "picture: %s\n", relative(path))
+	commandline.End(stdout, "picture", paths, caution)
+	if !r.checks.Passed() {
+		return commandline.Fail(stderr, "brick: a check failed, see the list")
 	}
-	fmt.Fprintf(stdout, "\n%s\n", caution)
-	if !r.passed() {
-		fmt.Fprintln(stderr, "brick: a check failed, see the list")
-		return failed
-	}
-	return done
-}
-
-// folder is where the pictures go: by default beside the source where that is at hand, as with go run.
-func (o *options) folder() string {
-	if o.out != "" {
-		return o.out
-	}
-	if _, file, _, ok := runtime.Caller(0); ok && filepath.IsAbs(file) {
-		if _, err := os.Stat(file); err == nil {
-			return filepath.Join(filepath.Dir(file), "out")
-		}
-	}
-	return "out"
-}
-
-// relative is a path as seen from the current folder, where that can be said.
-func relative(path string) string {
-	here, err := os.Getwd()
-	if err != nil || !filepath.IsAbs(path) {
-		return path
-	}
-	if short, err := filepath.Rel(here, path); err == nil {
-		return short
-	}
-	return path
+	return commandline.Done
 }

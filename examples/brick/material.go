@@ -3,10 +3,11 @@ package main
 import (
 	"math"
 
+	"gonum.org/v1/gonum/integrate/quad"
+
 	"example.com/holdtime/bench"
 	"example.com/holdtime/creeplaw"
 	"example.com/holdtime/integrate"
-	"gonum.org/v1/gonum/integrate/quad"
 )
 
 // The material is invented: it has the size of a low-alloy steel at 550 °C. MPa, h, K.

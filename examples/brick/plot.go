@@ -8,6 +8,8 @@ import (
 	"gonum.org/v1/plot"
 	"gonum.org/v1/plot/plotter"
 	"gonum.org/v1/plot/vg"
+
+	"example.com/holdtime/examples/figure"
 )
 
 // draw writes brick.png and brick.svg.
@@ -20,11 +22,12 @@ func (r *report) draw(folder string) ([]string, error) {
 	if err != nil {
 		return nil, err
 	}
-	return picture(folder, "brick", 28*vg.Centimeter, 13*vg.Centimeter, [][]*plot.Plot{{creep, newton}})
+	sheet := figure.Sheet{Panels: [][]*plot.Plot{{creep, newton}}, Width: 28 * vg.Centimeter, Height: 13 * vg.Centimeter}
+	return sheet.Save(folder, "brick")
 }
 
 func (r *report) creepPanel() (*plot.Plot, error) {
-	panel := newPanel("Creep strain of the brick in the tension program (invented data)", "Time [h]",
+	panel := figure.NewPanel("Creep strain of the brick in the tension program (invented data)", "Time [h]",
 		"Creep strain along the tension [%]")
 	var x, y []float64
 	begun, total, above := 0.0, 0.0, 0.0
@@ -37,17 +40,20 @@ func (r *report) creepPanel() (*plot.Plot, error) {
 		total += tensionCreep(s, above, s.hours, r.exponent)
 		begun, above = begun+s.hours, s.above
 	}
-	if err := addLine(panel, "closed form", pairs(x, y), blue, 1.6); err != nil {
+	line, err := figure.AddLine(panel, figure.Pairs(x, y), figure.Blue, 1.6)
+	if err != nil {
 		return nil, err
 	}
+	panel.Legend.Add("closed form", line)
 	var percent []float64
 	for _, e := range r.tension[0].strain {
 		percent = append(percent, 100*e)
 	}
-	name := "brick, end of each step"
-	if err := addMarks(panel, name, pairs(r.tension[0].hours, percent), vermillion); err != nil {
+	marks, err := figure.AddMarks(panel, figure.Pairs(r.tension[0].hours, percent), figure.Vermillion)
+	if err != nil {
 		return nil, err
 	}
+	panel.Legend.Add("brick, end of each step", marks)
 	panel.Legend.Top = true
 	panel.Legend.YOffs = -panel.Legend.YOffs
 	panel.X.Min, panel.Y.Min = 0, 0
@@ -56,8 +62,8 @@ func (r *report) creepPanel() (*plot.Plot, error) {
 }
 
 func (r *report) newtonPanel() (*plot.Plot, error) {
-	panel := newPanel("Residuals of the brick pulled askew", "Corrections of the global Newton iteration", "Residual, relative")
-	colours := []color.Color{grey, green, blue, vermillion}
+	panel := figure.NewPanel("Residuals of the brick pulled askew", "Corrections of the global Newton iteration", "Residual, relative")
+	colours := []color.Color{figure.Grey, figure.Green, figure.Blue, figure.Vermillion}
 	for i, residuals := range r.askew {
 		var xy plotter.XYs
 		for k, x := range residuals {
@@ -65,18 +71,20 @@ func (r *report) newtonPanel() (*plot.Plot, error) {
 				xy = append(xy, plotter.XY{X: float64(k), Y: math.Log10(x)})
 			}
 		}
-		name := fmt.Sprintf("Δt = %s h", grouped(askewHours[i], 0))
+		name := fmt.Sprintf("Δt = %s h", figure.Grouped(askewHours[i], 0))
 		if askewHours[i] == 0 {
 			name = "elastic"
 		}
-		if err := addLine(panel, name, xy, colours[i], 1.6); err != nil {
+		line, err := figure.AddLine(panel, xy, colours[i], 1.6)
+		if err != nil {
 			return nil, err
 		}
-		if err := addMarks(panel, "", xy, colours[i]); err != nil {
+		if _, err := figure.AddMarks(panel, xy, colours[i]); err != nil {
 			return nil, err
 		}
+		panel.Legend.Add(name, line)
 	}
-	panel.Y.Tick.Marker = decades{every: 2}
+	panel.Y.Tick.Marker = figure.Decades{Most: 8}
 	panel.X.Tick.Marker = whole{}
 	panel.X.Min, panel.Y.Max = 0, 0
 	panel.Legend.Top, panel.Legend.Left = true, false

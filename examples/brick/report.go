@@ -5,6 +5,8 @@ import (
 	"math"
 
 	"example.com/holdtime/bench"
+	"example.com/holdtime/examples/checklist"
+	"example.com/holdtime/examples/newton"
 	"example.com/holdtime/integrate"
 )
 
@@ -28,21 +30,7 @@ type report struct {
 	hold          bench.Study
 	askew         [][]float64
 	imbalance     float64
-	outcomes      []outcome
-}
-
-// outcome is a number held against its limit.
-type outcome struct {
-	name         string
-	value, limit float64
-	atLeast      bool // the value must not be below the limit; otherwise not above it
-}
-
-func (o outcome) passed() bool {
-	if o.atLeast {
-		return o.value >= o.limit
-	}
-	return o.value <= o.limit
+	checks        checklist.List
 }
 
 // newReport computes everything.
@@ -149,9 +137,6 @@ const (
 
 // judge holds the numbers against their limits.
 func (r *report) judge() {
-	most := func(name string, value, limit float64) {
-		r.outcomes = append(r.outcomes, outcome{name, value, limit, false})
-	}
 	for i, name := range []string{"one brick", "seven bricks"} {
 		spread, side, creep := 0.0, 0.0, 0.0
 		for _, row := range r.tension[i].rows {
@@ -160,27 +145,27 @@ func (r *report) judge() {
 				creep = math.Abs(row.creep/row.closed - 1)
 			}
 		}
-		most(name+" under tractions: stress of every point, from the stress applied", spread, uniform)
-		most(name+" under tractions: creep tensor of every point, from the tension's", side, uniform)
-		most(name+" under tractions: creep strain of the first hold, from A σⁿ t", creep, known)
+		r.checks.AtMost(name+" under tractions: stress of every point, from the stress applied", spread, uniform)
+		r.checks.AtMost(name+" under tractions: creep tensor of every point, from the tension's", side, uniform)
+		r.checks.AtMost(name+" under tractions: creep strain of the first hold, from A σⁿ t", creep, known)
 	}
-	most("heating under load: order of the error is 1, off by", offOne(r.heating), 0.05)
-	most("heating under load: extrapolated creep strain, from the quadrature", r.heating.ExtrapolatedError(), limit)
-	most("brick between plates: stress of every point, from uniaxial", r.barSpread, uniform)
-	most("brick between plates: order of the error is 1, off by", offOne(r.relaxation), 0.05)
-	most("brick between plates: extrapolated stress, from the closed form", r.relaxation.ExtrapolatedError(), limit)
+	r.checks.AtMost("heating under load: order of the error is 1, off by", offOne(r.heating), 0.05)
+	r.checks.AtMost("heating under load: extrapolated creep strain, from the quadrature", r.heating.ExtrapolatedError(), limit)
+	r.checks.AtMost("brick between plates: stress of every point, from uniaxial", r.barSpread, uniform)
+	r.checks.AtMost("brick between plates: order of the error is 1, off by", offOne(r.relaxation), 0.05)
+	r.checks.AtMost("brick between plates: extrapolated stress, from the closed form", r.relaxation.ExtrapolatedError(), limit)
 	spread, moved := 0.0, 0.0
 	for _, row := range r.strainedRows {
 		spread, moved = math.Max(spread, row.spread), math.Max(moved, row.inner)
 	}
-	most("patch: stress of every point, from one material point", spread, uniform)
-	most("patch: inner nodes, from the linear field", moved, uniform)
-	most("patch: order of the error is 1, off by", offOne(r.hold), 0.05)
-	most("patch: extrapolated stress of the hold, from the closed form", r.hold.ExtrapolatedError(), limit)
-	most("brick pulled askew: forces and moments of the supports, from the loads", r.imbalance, uniform)
-	most("all Newton iterations: largest r(k+1)/r(k)² below 1e-2", r.constant(), 100)
+	r.checks.AtMost("patch: stress of every point, from one material point", spread, uniform)
+	r.checks.AtMost("patch: inner nodes, from the linear field", moved, uniform)
+	r.checks.AtMost("patch: order of the error is 1, off by", offOne(r.hold), 0.05)
+	r.checks.AtMost("patch: extrapolated stress of the hold, from the closed form", r.hold.ExtrapolatedError(), limit)
+	r.checks.AtMost("brick pulled askew: forces and moments of the supports, from the loads", r.imbalance, uniform)
+	r.checks.AtMost("all Newton iterations: largest r(k+1)/r(k)² below 1e-2", r.constant(), 100)
 	if least, ok := r.order(); ok {
-		r.outcomes = append(r.outcomes, outcome{"brick pulled askew: least order of a Newton iteration", least, 1.8, true})
+		r.checks.AtLeast("brick pulled askew: least order of a Newton iteration", least, 1.8)
 	}
 }
 
@@ -192,9 +177,9 @@ func offOne(s bench.Study) float64 {
 
 // constant is the largest over the sequences that are kept.
 func (r *report) constant() float64 {
-	largest := math.Max(constant(r.strainedWorst), math.Max(constant(r.tension[0].worst), constant(r.tension[1].worst)))
-	for _, residuals := range r.askew {
-		largest = math.Max(largest, constant(residuals))
+	largest := 0.0
+	for _, residuals := range append(r.askew[:len(r.askew):len(r.askew)], r.strainedWorst, r.tension[0].worst, r.tension[1].worst) {
+		largest = math.Max(largest, newton.Constant(residuals, solved))
 	}
 	return largest
 }
@@ -203,19 +188,9 @@ func (r *report) constant() float64 {
 func (r *report) order() (least float64, any bool) {
 	least = math.Inf(1)
 	for _, residuals := range r.askew {
-		if o, ok := order(residuals); ok {
+		if o, ok := newton.Order(residuals, solved); ok {
 			least, any = math.Min(least, o), true
 		}
 	}
 	return least, any
-}
-
-// passed reports whether every number keeps its limit.
-func (r *report) passed() bool {
-	for _, o := range r.outcomes {
-		if !o.passed() {
-			return false
-		}
-	}
-	return true
 }

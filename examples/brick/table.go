@@ -6,6 +6,7 @@ import (
 	"strings"
 
 	"example.com/holdtime/bench"
+	"example.com/holdtime/examples/newton"
 )
 
 // write prints the report.
@@ -23,7 +24,7 @@ The host's components are %q with engineering shear. "Newton" is the most iterat
 %s`, barStress, barHours, indented(r.relaxation))
 	r.writeStrained(w)
 	r.writeAskew(w)
-	r.writeOutcomes(w)
+	r.checks.Write(w)
 }
 
 func (r *report) writeTension(w io.Writer) {
@@ -67,18 +68,10 @@ func (r *report) writeAskew(w io.Writer) {
    Residual before each correction and after the last, over the load's size:
 `, askewLoad)
 	for i, residuals := range r.askew {
-		fmt.Fprintf(w, "   Δt = %-6g h  %s\n", askewHours[i], sequence(residuals))
+		fmt.Fprintf(w, "   Δt = %-6g h  %s\n", askewHours[i], newton.Text(residuals, "  "))
 	}
-	fmt.Fprintf(w, "   the longest of the patch   %s\n", sequence(r.strainedWorst))
-	fmt.Fprintf(w, "   the longest of the tension %s\n", sequence(r.tension[0].worst))
-}
-
-func sequence(residuals []float64) string {
-	var words []string
-	for _, x := range residuals {
-		words = append(words, fmt.Sprintf("%.1e", x))
-	}
-	return strings.Join(words, "  ")
+	fmt.Fprintf(w, "   the longest of the patch   %s\n", newton.Text(r.strainedWorst, "  "))
+	fmt.Fprintf(w, "   the longest of the tension %s\n", newton.Text(r.tension[0].worst, "  "))
 }
 
 func indented(s bench.Study) string {
@@ -87,18 +80,4 @@ func indented(s bench.Study) string {
 		b.WriteString("   " + line + "\n")
 	}
 	return b.String()
-}
-
-func (r *report) writeOutcomes(w io.Writer) {
-	fmt.Fprintf(w, "\nWHAT WAS CHECKED %74s %11s\n", "value", "limit")
-	for _, o := range r.outcomes {
-		verdict, sense := "pass", "≤"
-		if !o.passed() {
-			verdict = "FAIL"
-		}
-		if o.atLeast {
-			sense = "≥"
-		}
-		fmt.Fprintf(w, "   %s  %-80s %-9.2g %s %g\n", verdict, o.name, o.value, sense, o.limit)
-	}
 }

@@ -2,9 +2,6 @@ package main
 
 import (
 	"bytes"
-	"encoding/xml"
-	"errors"
-	"image/png"
 	"io"
 	"os"
 	"path/filepath"
@@ -17,6 +14,9 @@ import (
 
 	"example.com/holdtime/creeplaw/audit"
 	"example.com/holdtime/creeplaw/published"
+	"example.com/holdtime/examples/commandline"
+	"example.com/holdtime/examples/commandline/commandtest"
+	"example.com/holdtime/examples/figure/figuretest"
 )
 
 // usualStudy is that of the default flags, made once.
@@ -141,18 +141,11 @@ func TestFilesAreWritten(t *testing.T) {
 	report := filepath.Join(folder, "report.txt")
 	var stdout, stderr bytes.Buffer
 	status := command([]string{"-out", filepath.Join(folder, "new"), "-report", report, "-stress", "100"}, "1 May 2025", &stdout, &stderr)
-	require.Equal(t, done, status, stderr.String())
+	require.Equal(t, commandline.Done, status, stderr.String())
 	require.Empty(t, stderr.String())
 	for _, name := range []string{"choose", "published"} {
-		f, err := os.Open(filepath.Join(folder, "new", name+".png"))
-		require.NoError(t, err)
-		picture, err := png.Decode(f)
-		require.NoError(t, err)
-		require.NoError(t, f.Close())
-		require.Greater(t, picture.Bounds().Dx(), 1000)
-		vector, err := os.ReadFile(filepath.Join(folder, "new", name+".svg"))
-		require.NoError(t, err)
-		require.NoError(t, wellFormed(vector))
+		figuretest.PNG(t, filepath.Join(folder, "new", name+".png"), 1000, 1000)
+		figuretest.SVG(t, filepath.Join(folder, "new", name+".svg"), "Stress [MPa]", "Rate [1/h]")
 		require.Contains(t, stdout.String(), name+".svg")
 	}
 	text, err := os.ReadFile(report)
@@ -166,17 +159,6 @@ func TestFilesAreWritten(t *testing.T) {
 	require.Equal(t, len(s.rows), strings.Count(plain, "Date: 1 May 2025"))
 }
 
-func wellFormed(document []byte) error {
-	d := xml.NewDecoder(bytes.NewReader(document))
-	for {
-		if _, err := d.Token(); errors.Is(err, io.EOF) {
-			return nil
-		} else if err != nil {
-			return err
-		}
-	}
-}
-
 // TestFarConditions: at any stress and temperature that the flags allow the program does its work, also where a table ends.
 func TestFarConditions(t *testing.T) {
 	for _, flags := range [][]string{
@@ -185,33 +167,31 @@ func TestFarConditions(t *testing.T) {
 	} {
 		var stdout, stderr bytes.Buffer
 		status := command(append(flags, "-out", t.TempDir(), "-report", "-"), "", &stdout, &stderr)
-		require.Equal(t, done, status, "%v: %s", flags, stderr.String())
+		require.Equal(t, commandline.Done, status, "%v: %s", flags, stderr.String())
 		require.Contains(t, stdout.String(), "Audit of a creep law")
 		require.NotContains(t, stdout.String(), "Date:")
 	}
 }
 
 func TestFlags(t *testing.T) {
-	for _, c := range []struct {
-		args    []string
-		status  int
-		message string
-	}{
-		{[]string{"-stress", "0"}, refused, "-stress is 0"},
-		{[]string{"-stress", "NaN"}, refused, "-stress is NaN"},
-		{[]string{"-temperature", "2000"}, refused, "-temperature is 2000"},
-		{[]string{"-stess", "1"}, refused, "run it with -h"},
-		{[]string{"file.txt"}, refused, `"file.txt" is not a flag`},
-		{[]string{"-law", "no such law"}, failed, `no law has "no such law"`},
-		{[]string{"-law", "Coble", "-report", filepath.Join("nowhere", "report.txt")}, failed, "the report was not written"},
-	} {
-		var stdout, stderr bytes.Buffer
-		require.Equal(t, c.status, command(append(c.args[:len(c.args):len(c.args)], "-out", t.TempDir()), "", &stdout, &stderr), c.args)
-		require.Contains(t, stderr.String(), c.message)
-	}
+	commandtest.Helps(t, undated, "usage: choose [flags]", "-temperature")
+	commandtest.Refuses(t, undated, [][2]string{
+		{"-stress 0", "-stress is 0"},
+		{"-stress NaN", "-stress is NaN"},
+		{"-temperature 2000", "-temperature is 2000"},
+		{"-stess 1", "run it with -h"},
+		{"file.txt", `"file.txt" is not a flag`},
+	})
+}
+
+func undated(args []string, stdout, stderr io.Writer) int { return command(args, "", stdout, stderr) }
+
+func TestWhatFails(t *testing.T) {
 	var stdout, stderr bytes.Buffer
-	require.Equal(t, done, command([]string{"-h"}, "", &stdout, &stderr))
-	require.Contains(t, stdout.String(), "usage: choose [flags]")
-	require.Contains(t, stdout.String(), "-temperature")
-	require.Empty(t, stderr.String())
+	require.Equal(t, commandline.Failed, undated([]string{"-law", "no such law", "-out", t.TempDir()}, &stdout, &stderr))
+	require.Contains(t, stderr.String(), `no law has "no such law"`)
+	args := []string{"-law", "Coble", "-report", filepath.Join("nowhere", "report.txt"), "-out", t.TempDir()}
+	require.Equal(t, commandline.Failed, undated(args, &stdout, &stderr))
+	require.Contains(t, stderr.String(), "the report was not written")
+	commandtest.FolderThatCannotBeMade(t, undated, []string{"-law", "Coble"}, "the picture was not drawn", "Coble")
 }

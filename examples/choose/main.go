@@ -11,20 +11,12 @@ import (
 	"fmt"
 	"io"
 	"os"
-	"path/filepath"
-	"runtime"
 	"strings"
 	"time"
 	"unicode/utf8"
 
 	"example.com/holdtime/creeplaw/audit"
-)
-
-// Exit statuses.
-const (
-	done    = 0
-	failed  = 1
-	refused = 2 // flags
+	"example.com/holdtime/examples/commandline"
 )
 
 const zeroCelsius = 273.15
@@ -44,68 +36,51 @@ func (o *options) kelvin() float64 { return o.celsius + zeroCelsius }
 
 func parse(args []string, stdout, stderr io.Writer) (options, error) {
 	var o options
-	set := flag.NewFlagSet("choose", flag.ContinueOnError)
-	set.SetOutput(stderr)
-	set.Usage = func() {} // a mistyped flag is told in one line
+	usage := commandline.Usage{Name: "choose", Help: helpText, Shows: "its flags", Inputs: ", and there are no input files"}
+	err := usage.Parse(args, stdout, stderr, o.define, o.check)
+	return o, err
+}
+
+func (o *options) define(set *flag.FlagSet) {
 	set.Float64Var(&o.stress, "stress", 130, "stress in `MPa` of the creep curves of the invented steel, 1 to 1000")
 	set.Float64Var(&o.celsius, "temperature", 600, "its temperature in `°C`, 300 to 900")
 	set.StringVar(&o.law, "law", "", "only laws with this `text` in their name or family")
 	set.StringVar(&o.report, "report", "", "write the full text of every audit to this `file`; - for the standard output")
 	set.StringVar(&o.out, "out", "", "`folder` for the pictures; out beside the source of the example if empty")
-	err := set.Parse(args)
+}
+
+func (o *options) check() error {
 	switch {
-	case errors.Is(err, flag.ErrHelp):
-		fmt.Fprint(stdout, helpText)
-		set.SetOutput(stdout)
-		set.PrintDefaults()
-		return o, err
-	case err != nil:
-		err = errors.New("choose: run it with -h for its flags") // the flag itself has been named
-	case set.NArg() > 0:
-		err = fmt.Errorf("choose: %q is not a flag, and there are no input files", set.Arg(0))
 	case !(o.stress >= 1 && o.stress <= 1000):
-		err = fmt.Errorf("choose: -stress is %v, must be between 1 and 1000 MPa", o.stress)
+		return fmt.Errorf("-stress is %v, must be between 1 and 1000 MPa", o.stress)
 	case !(o.celsius >= 300 && o.celsius <= 900):
-		err = fmt.Errorf("choose: -temperature is %v, must be between 300 and 900 °C", o.celsius)
+		return fmt.Errorf("-temperature is %v, must be between 300 and 900 °C", o.celsius)
 	}
-	if err != nil {
-		fmt.Fprintln(stderr, err)
-	}
-	return o, err
+	return nil
 }
 
 // command is the program but for its exit and its date.
 func command(args []string, date string, stdout, stderr io.Writer) int {
 	o, err := parse(args, stdout, stderr)
-	if errors.Is(err, flag.ErrHelp) {
-		return done
-	}
 	if err != nil {
-		return refused
+		return commandline.Status(err)
 	}
 	s, err := newStudy(o)
 	if err != nil {
-		fmt.Fprintf(stderr, "choose: %v\n", err)
-		return failed
+		return commandline.Fail(stderr, "choose: %v", err)
 	}
 	fmt.Fprintf(stdout, "Creep laws compared by their audits, %s\n", date)
 	s.writeTable(stdout)
 	s.writeFaults(stdout)
 	if err := s.writeReports(stdout, date); err != nil {
-		fmt.Fprintf(stderr, "choose: the report was not written: %v\n", err)
-		return failed
+		return commandline.Fail(stderr, "choose: the report was not written: %v", err)
 	}
-	paths, err := s.draw(o.folder())
+	paths, err := s.draw(commandline.OutputFolder(o.out, "", commandline.SourceFolder()))
 	if err != nil {
-		fmt.Fprintf(stderr, "choose: the picture was not drawn: %v\n", err)
-		return failed
+		return commandline.Fail(stderr, "choose: the picture was not drawn: %v", err)
 	}
-	fmt.Fprintln(stdout)
-	for _, path := range paths {
-		fmt.Fprintf(stdout, "picture: %s\n", relative(path))
-	}
-	fmt.Fprintf(stdout, "\n%s\n", caution)
-	return done
+	commandline.End(stdout, "picture", paths, caution)
+	return commandline.Done
 }
 
 // writeFaults says in a sentence each what makes a law faulty.
@@ -173,29 +148,4 @@ func (s *study) writeReports(stdout io.Writer, date string) (err error) {
 		fmt.Fprintf(stdout, "\nreport: %s\n", s.report)
 	}
 	return nil
-}
-
-// folder is where the pictures go.
-func (o *options) folder() string {
-	if o.out != "" {
-		return o.out
-	}
-	if _, file, _, ok := runtime.Caller(0); ok && filepath.IsAbs(file) {
-		if _, err := os.Stat(file); err == nil {
-			return filepath.Join(filepath.Dir(file), "out")
-		}
-	}
-	return "out"
-}
-
-// relative is a path as seen from the current folder, where that can be said.
-func relative(path string) string {
-	here, err := os.Getwd()
-	if err != nil || !filepath.IsAbs(path) {
-		return path
-	}
-	if short, err := filepath.Rel(here, path); err == nil {
-		return short
-	}
-	return path
 }

@@ -3,45 +3,30 @@ package main
 import (
 	"fmt"
 	"image/color"
-	"io"
 	"math"
-	"os"
-	"path/filepath"
 
 	"gonum.org/v1/plot"
-	"gonum.org/v1/plot/font"
 	"gonum.org/v1/plot/plotter"
 	"gonum.org/v1/plot/vg"
 	"gonum.org/v1/plot/vg/draw"
-	"gonum.org/v1/plot/vg/vgimg"
-	"gonum.org/v1/plot/vg/vgsvg"
+
+	"example.com/holdtime/examples/figure"
 )
 
-// Colours that stay apart in the common forms of colour blindness (the palette of Okabe and Ito 2008, from memory), and dashes,
-// so that lines on top of each other show.
+// Colours and dashes, so that lines on top of each other show.
 var (
-	black      = color.RGBA{0, 0, 0, 255}
-	blue       = color.RGBA{0, 114, 178, 255}
-	vermillion = color.RGBA{213, 94, 0, 255}
-	green      = color.RGBA{0, 158, 115, 255}
-	purple     = color.RGBA{204, 121, 167, 255}
-	orange     = color.RGBA{230, 159, 0, 255}
-	sky        = color.RGBA{86, 180, 233, 255}
-	pale       = color.RGBA{228, 228, 228, 255}
-	shade      = color.RGBA{240, 245, 250, 255}
-
-	colours = []color.Color{blue, vermillion, green, purple, orange, sky, black}
+	shade   = color.RGBA{240, 245, 250, 255}
+	colours = []color.Color{figure.Blue, figure.Vermillion, figure.Green, figure.Purple, figure.Orange, figure.Sky, figure.Black}
 	dashes  = [][]vg.Length{nil, {7, 3}, {2, 2}, {9, 2, 2, 2}, {5, 2}, {3, 3}, {1, 2}}
 )
 
 const (
-	pixelsPerInch = 150
-	blockWidth    = 19 * vg.Centimeter
-	panelHeight   = 6.6 * vg.Centimeter
-	entryHeight   = 0.42 * vg.Centimeter
-	titleHeight   = 0.9 * vg.Centimeter
-	gap           = 0.6 * vg.Centimeter
-	margin        = 0.8 * vg.Centimeter
+	blockWidth  = 19 * vg.Centimeter
+	panelHeight = 6.6 * vg.Centimeter
+	entryHeight = 0.42 * vg.Centimeter
+	titleHeight = 0.9 * vg.Centimeter
+	gap         = 0.6 * vg.Centimeter
+	margin      = 0.8 * vg.Centimeter
 )
 
 // block is one family: creep curves, rates over stress, names.
@@ -52,9 +37,6 @@ type block struct {
 
 // draw writes the pictures as PNG and SVG into a folder, which it makes, and returns the paths.
 func (s *study) draw(folder string) ([]string, error) {
-	if err := os.MkdirAll(folder, 0o777); err != nil {
-		return nil, err
-	}
 	var paths []string
 	for _, p := range []struct {
 		name     string
@@ -70,7 +52,7 @@ func (s *study) draw(folder string) ([]string, error) {
 		if len(blocks) == 0 {
 			continue
 		}
-		files, err := writePicture(filepath.Join(folder, p.name), p.title, blocks)
+		files, err := writePicture(folder, p.name, p.title, blocks)
 		if err != nil {
 			return nil, err
 		}
@@ -95,7 +77,7 @@ func (s *study) blocks(families []family) []block {
 	return list
 }
 
-func writePicture(path, title string, blocks []block) ([]string, error) {
+func writePicture(folder, name, title string, blocks []block) ([]string, error) {
 	columns := min(2, len(blocks))
 	lines := (len(blocks) + columns - 1) / columns
 	entries := 0
@@ -104,10 +86,7 @@ func writePicture(path, title string, blocks []block) ([]string, error) {
 	}
 	height := titleHeight + panelHeight + vg.Length(entries)*entryHeight + gap
 	size := vg.Point{X: vg.Length(columns)*(blockWidth+gap) + 2*margin - gap, Y: vg.Length(lines)*height + 2*margin + titleHeight}
-	bitmap := vgimg.NewWith(vgimg.UseWH(size.X, size.Y), vgimg.UseDPI(pixelsPerInch))
-	vector := vgsvg.NewWith(vgsvg.UseWH(size.X, size.Y), vgsvg.EmbedFonts(true))
-	for _, c := range []draw.Canvas{draw.New(bitmap), draw.New(vector)} {
-		c.FillPolygon(color.White, []vg.Point{{}, {X: size.X}, size, {Y: size.Y}})
+	return figure.Save(folder, name, size.X, size.Y, func(c draw.Canvas) error {
 		text(c, title, vg.Point{X: margin, Y: size.Y - margin}, 13, draw.YTop)
 		for i, b := range blocks {
 			left := margin + vg.Length(i%columns)*(blockWidth+gap)
@@ -115,27 +94,11 @@ func writePicture(path, title string, blocks []block) ([]string, error) {
 			area := draw.Canvas{Canvas: c.Canvas, Rectangle: vg.Rectangle{Min: vg.Point{X: left, Y: top - height + gap},
 				Max: vg.Point{X: left + blockWidth, Y: top}}}
 			if err := b.draw(area, entries); err != nil {
-				return nil, err
+				return err
 			}
 		}
-	}
-	png, svg := path+".png", path+".svg"
-	if err := writeFile(png, vgimg.PngCanvas{Canvas: bitmap}); err != nil {
-		return nil, err
-	}
-	return []string{png, svg}, writeFile(svg, vector)
-}
-
-func writeFile(path string, picture io.WriterTo) error {
-	f, err := os.Create(path)
-	if err != nil {
-		return err
-	}
-	if _, err := picture.WriteTo(f); err != nil {
-		f.Close()
-		return err
-	}
-	return f.Close()
+		return nil
+	})
 }
 
 // draw puts the title on top, two panels below it, and the names at the foot.
@@ -169,7 +132,7 @@ func (b *block) draw(c draw.Canvas, entries int) error {
 func (r *row) label() string {
 	name := r.shortName(44)
 	if r.origin != inventedNumbers {
-		name = fmt.Sprintf("%s (%.2g MPa, %.0f °C)", r.shortName(36), r.stress, r.temperature-zeroCelsius)
+		name = fmt.Sprintf("%s (%.2g MPa, %.0f °C)", r.shortName(33), r.stress, r.temperature-zeroCelsius)
 	}
 	if r.report.Worst() == faulty {
 		name += "  (!)"
@@ -182,28 +145,17 @@ func style(i int) draw.LineStyle {
 }
 
 func text(c draw.Canvas, s string, at vg.Point, size vg.Length, align draw.YAlignment) {
-	c.FillText(draw.TextStyle{Color: black, Font: sans(size), YAlign: align, Handler: plot.DefaultTextHandler}, at, s)
+	c.FillText(draw.TextStyle{Color: figure.Black, Font: figure.Sans(size), YAlign: align, Handler: plot.DefaultTextHandler}, at, s)
 }
 
-func sans(size vg.Length) font.Font {
-	f := plot.DefaultFont
-	f.Typeface, f.Variant, f.Size = "Liberation", "Sans", size
-	return f
-}
-
-// newPanel is an empty panel.
+// newPanel is an empty panel with small letters.
 func newPanel(x, y string) *plot.Plot {
-	panel := plot.New()
-	for i, axis := range []*plot.Axis{&panel.X, &panel.Y} {
-		axis.Label.Text = []string{x, y}[i]
-		axis.Label.TextStyle.Font = sans(9.5)
-		axis.Tick.Label.Font = sans(8.5)
-		axis.Padding = 0
+	panel := figure.NewPanel("", x, y)
+	for _, axis := range []*plot.Axis{&panel.X, &panel.Y} {
+		axis.Label.TextStyle.Font, axis.Tick.Label.Font = figure.Sans(9.5), figure.Sans(8.5)
 		axis.Label.Padding = 1 * vg.Millimeter
+		axis.Tick.Marker = figure.Round{Most: 6}
 	}
-	grid := plotter.NewGrid()
-	grid.Vertical.Color, grid.Horizontal.Color = pale, pale
-	panel.Add(grid)
 	return panel
 }
 
@@ -216,8 +168,12 @@ func (b *block) creepPanel() (*plot.Plot, error) {
 	for i, r := range b.rows {
 		var xy plotter.XYs
 		for _, s := range r.course.samples {
-			if !logarithmic || s.time > 0 && 100*s.strain > panel.Y.Min/10 {
-				xy = append(xy, plotter.XY{X: s.time, Y: 100 * s.strain})
+			at := plotter.XY{X: s.time, Y: 100 * s.strain}
+			if logarithmic {
+				at = plotter.XY{X: math.Log10(at.X), Y: math.Log10(at.Y)}
+			}
+			if !logarithmic || s.time > 0 && at.Y > panel.Y.Min-1 {
+				xy = append(xy, at)
 			}
 		}
 		if len(xy) == 0 {
@@ -246,22 +202,20 @@ func (b *block) creepRange(panel *plot.Plot, logarithmic bool) {
 	panel.X.Min, panel.X.Max = 0, longest
 	panel.Y.Min, panel.Y.Max = 0, math.Min(1.05*highest, mostStrain)
 	if !logarithmic {
-		panel.X.Tick.Marker, panel.Y.Tick.Marker = ticks{6}, ticks{6}
 		return
 	}
-	panel.X.Min = shortest * 1e-3
+	panel.X.Min, panel.X.Max = math.Log10(shortest)-3, math.Log10(longest)
 	if shortest == longest {
-		panel.X.Min = longest * 1e-5
+		panel.X.Min = panel.X.Max - 5
 	}
-	panel.Y.Min, panel.Y.Max = 1e-3, math.Max(panel.Y.Max, 1)
-	logarithmicAxis(&panel.X)
-	logarithmicAxis(&panel.Y)
+	panel.Y.Min, panel.Y.Max = -3, math.Max(math.Log10(panel.Y.Max), 0)
+	panel.X.Tick.Marker, panel.Y.Tick.Marker = figure.Decades{Most: 6}, figure.Decades{Most: 6}
 }
 
 // mostStrain is the highest creep strain shown [%].
 const mostStrain = 8
 
-// ratePanel is the rate over stress, a decade beyond the audited domain to either side.
+// ratePanel is the rate over stress, both logarithmic, a decade beyond the audited domain to either side.
 func (b *block) ratePanel() (*plot.Plot, error) {
 	low, high := math.Inf(1), 0.0
 	within := [2]float64{math.Inf(1), math.Inf(-1)}
@@ -278,17 +232,17 @@ func (b *block) ratePanel() (*plot.Plot, error) {
 	}
 	panel := newPanel("Stress [MPa]", "Rate [1/h]")
 	if b.rows[0].origin == inventedNumbers { // with what lies beyond the domain
-		panel.X.Min, panel.X.Max = low/10, high*10
-		panel.Y.Min, panel.Y.Max = math.Pow(10, math.Max(within[0]-4, -22)), math.Pow(10, math.Min(within[1]+4, 10))
-		if err := addShade(panel, low, high); err != nil {
+		panel.X.Min, panel.X.Max = math.Log10(low)-1, math.Log10(high)+1
+		panel.Y.Min, panel.Y.Max = math.Max(within[0]-4, -22), math.Min(within[1]+4, 10)
+		if err := addShade(panel, math.Log10(low), math.Log10(high)); err != nil {
 			return nil, err
 		}
 	} else {
-		panel.X.Min, panel.X.Max = low/1.2, high*1.2
-		panel.Y.Min, panel.Y.Max = math.Pow(10, math.Floor(within[0])), math.Pow(10, math.Ceil(within[1]))
+		panel.X.Min, panel.X.Max = math.Log10(low/1.2), math.Log10(high*1.2)
+		panel.Y.Min, panel.Y.Max = math.Floor(within[0]), math.Ceil(within[1])
 	}
 	for i, r := range b.rows {
-		xy := r.rates(panel.X.Min, panel.X.Max)
+		xy := r.rates(math.Pow(10, panel.X.Min), math.Pow(10, panel.X.Max))
 		if len(xy) == 0 {
 			continue
 		}
@@ -296,12 +250,11 @@ func (b *block) ratePanel() (*plot.Plot, error) {
 			return nil, fmt.Errorf("%s: %w", r.name, err)
 		}
 	}
-	logarithmicAxis(&panel.X)
-	logarithmicAxis(&panel.Y)
+	panel.X.Tick.Marker, panel.Y.Tick.Marker = figure.Decades{Most: 6}, figure.Decades{Most: 6}
 	return panel, nil
 }
 
-// rates are the finite rates over stress; published sets keep to the range they are known for.
+// rates are the decimal logarithms of the finite rates over those of stress; published sets keep to the range they are known for.
 func (r *row) rates(low, high float64) (xy plotter.XYs) {
 	if r.origin != inventedNumbers {
 		low, high = r.domain.Stress.Low, r.domain.Stress.High
@@ -310,7 +263,7 @@ func (r *row) rates(low, high float64) (xy plotter.XYs) {
 	for i := range points + 1 {
 		s := low * math.Pow(high/low, float64(i)/points)
 		if l := r.logRateAt(s); l > -700 && l < 700 {
-			xy = append(xy, plotter.XY{X: s, Y: math.Exp(l)})
+			xy = append(xy, plotter.XY{X: math.Log10(s), Y: l / math.Ln10})
 		}
 	}
 	return xy

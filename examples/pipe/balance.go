@@ -5,8 +5,9 @@ import (
 	"fmt"
 	"math"
 
-	"example.com/holdtime/integrate"
 	"gonum.org/v1/gonum/mat"
+
+	"example.com/holdtime/integrate"
 )
 
 // balance is the wall's system of equations at the end of a step: with the nodal shape functions N,

@@ -3,8 +3,9 @@ package main
 import (
 	"math"
 
-	"example.com/holdtime/bench"
 	"gonum.org/v1/gonum/integrate/quad"
+
+	"example.com/holdtime/bench"
 )
 
 // wallStress are the three stresses at a radius.

@@ -3,10 +3,7 @@ package main
 import (
 	"bytes"
 	"encoding/csv"
-	"encoding/xml"
 	"errors"
-	"image/png"
-	"io"
 	"math"
 	"os"
 	"path/filepath"
@@ -14,37 +11,26 @@ import (
 	"strings"
 	"testing"
 
-	"example.com/holdtime/bench/check"
 	"github.com/stretchr/testify/assert"
 	"github.com/stretchr/testify/require"
+
+	"example.com/holdtime/bench/check"
+	"example.com/holdtime/examples/commandline"
+	"example.com/holdtime/examples/commandline/commandtest"
+	"example.com/holdtime/examples/figure/figuretest"
+	"example.com/holdtime/examples/position"
 )
 
 func TestFlags(t *testing.T) {
-	cases := []struct {
-		args   []string
-		status int
-		says   string
-	}{
-		{[]string{"-h"}, done, "creep_rate_per_h"},
-		{[]string{"-x"}, refused, "-h"},
-		{[]string{"pipe.json"}, refused, "-pipe"},
-		{[]string{"-elements", "1"}, refused, "-elements is 1"},
-		{[]string{"-tolerance", "NaN"}, refused, "-tolerance is NaN"},
-		{[]string{"-tolerance", "1"}, refused, "-tolerance is 1"},
-		{[]string{"-pipe", "not-there.json"}, refused, "not-there.json"},
-	}
-	for _, c := range cases {
-		var out, err bytes.Buffer
-		assert.Equal(t, c.status, command(c.args, &out, &err), "%v", c.args)
-		if c.status == done {
-			assert.Contains(t, out.String(), c.says)
-			assert.Contains(t, out.String(), "governing code")
-			assert.Empty(t, err.String())
-		} else {
-			assert.Contains(t, err.String(), c.says, "%v", c.args)
-			assert.Empty(t, out.String(), "%v", c.args)
-		}
-	}
+	commandtest.Helps(t, command, "creep_rate_per_h")
+	commandtest.Refuses(t, command, [][2]string{
+		{"-x", "-h"},
+		{"pipe.json", "-pipe"},
+		{"-elements 1", "-elements is 1"},
+		{"-tolerance NaN", "-tolerance is NaN"},
+		{"-tolerance 1", "-tolerance is 1"},
+		{"-pipe not-there.json", "not-there.json"},
+	})
 }
 
 // Every field of the file is read strictly, and a mistake is told with its place.
@@ -81,7 +67,7 @@ func TestBrokenFiles(t *testing.T) {
 		_, err := readPipe("p.json", []byte(strings.Replace(good, c.old, c.new, 1)))
 		require.Error(t, err, c.new)
 		assert.Contains(t, err.Error(), c.says, c.new)
-		var wrong *inputError
+		var wrong *position.Error
 		assert.True(t, errors.As(err, &wrong) && wrong.Line > 0 && wrong.Column > 0, "%v", err)
 	}
 	for _, text := range []string{"", " ", "3", "null", `"x"`} {
@@ -100,7 +86,7 @@ func TestPrintedReportAndFiles(t *testing.T) {
 	text := strings.Replace(string(builtIn), `"pressure_MPa": 30`, `"pressure_MPa": 20`, 1)
 	require.NoError(t, os.WriteFile(path, []byte(text), 0o666))
 	var out, failure bytes.Buffer
-	require.Equal(t, done, command([]string{"-pipe", path, "-elements", "16", "-tolerance", "1e-3"}, &out, &failure), failure.String())
+	require.Equal(t, commandline.Done, command([]string{"-pipe", path, "-elements", "16", "-tolerance", "1e-3"}, &out, &failure), failure.String())
 	assert.Equal(t, 17, strings.Count(out.String(), "   pass  "), out.String())
 	assert.NotContains(t, out.String(), "FAIL")
 	for _, words := range []string{"20 MPa inside", "Bailey's closed form", "NEWTON", "governing code", "approach.svg"} {
@@ -108,21 +94,8 @@ func TestPrintedReportAndFiles(t *testing.T) {
 	}
 	for name, words := range map[string]string{"uniform": "steady state, Bailey", "gradient": "bore at 540 °C, outside at 560 °C",
 		"approach": "the way to the steady state"} {
-		f, err := os.Open(filepath.Join(folder, "out", name+".png"))
-		require.NoError(t, err)
-		picture, err := png.Decode(f)
-		require.NoError(t, f.Close())
-		require.NoError(t, err)
-		assert.True(t, picture.Bounds().Dx() > 1000 && picture.Bounds().Dy() > 1000, "%v", picture.Bounds())
-		vector, err := os.ReadFile(filepath.Join(folder, "out", name+".svg"))
-		require.NoError(t, err)
-		assert.Contains(t, string(vector), words)
-		assert.Contains(t, string(vector), "invented")
-		d := xml.NewDecoder(bytes.NewReader(vector))
-		for err = nil; err == nil; {
-			_, err = d.Token()
-		}
-		assert.True(t, errors.Is(err, io.EOF), "%s.svg is not XML: %v", name, err)
+		figuretest.PNG(t, filepath.Join(folder, "out", name+".png"), 1000, 1000)
+		figuretest.SVG(t, filepath.Join(folder, "out", name+".svg"), words, "invented")
 	}
 	checkTable(t, filepath.Join(folder, "out", "uniform.csv"))
 }
@@ -150,12 +123,8 @@ func checkTable(t *testing.T, path string) {
 }
 
 func TestFilesThatCannotBeWritten(t *testing.T) {
-	file := filepath.Join(t.TempDir(), "file")
-	require.NoError(t, os.WriteFile(file, nil, 0o666))
-	var out, err bytes.Buffer
-	assert.Equal(t, failed, command([]string{"-elements", "8", "-tolerance", "1e-3", "-out", filepath.Join(file, "out")}, &out, &err))
-	assert.Contains(t, err.String(), "the files were not written")
-	assert.Contains(t, out.String(), "WHAT WAS CHECKED")
+	commandtest.FolderThatCannotBeMade(t, command, []string{"-elements", "8", "-tolerance", "1e-3"}, "the files were not written",
+		"WHAT WAS CHECKED")
 }
 
 // A mesh that is too coarse for the pipe is told by the exit status.
@@ -164,7 +133,7 @@ func TestCoarseMeshFails(t *testing.T) {
 	text := strings.Replace(string(builtIn), `"outer_radius_mm": 100`, `"outer_radius_mm": 600`, 1)
 	require.NoError(t, os.WriteFile(path, []byte(text), 0o666))
 	var out, err bytes.Buffer
-	assert.Equal(t, failed, command([]string{"-pipe", path, "-elements", "4", "-tolerance", "1e-3"}, &out, &err))
+	assert.Equal(t, commandline.Failed, command([]string{"-pipe", path, "-elements", "4", "-tolerance", "1e-3"}, &out, &err))
 	assert.Contains(t, out.String(), "FAIL")
 	assert.Contains(t, err.String(), "a check failed")
 }

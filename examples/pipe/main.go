@@ -8,24 +8,17 @@ package main
 
 import (
 	_ "embed"
-	"errors"
 	"flag"
 	"fmt"
 	"io"
 	"os"
 	"path/filepath"
-	"runtime"
+
+	"example.com/holdtime/examples/commandline"
 )
 
 //go:embed pipe.json
 var builtIn []byte
-
-// Exit statuses.
-const (
-	done    = 0
-	failed  = 1
-	refused = 2 // flags or input file
-)
 
 func main() { os.Exit(command(os.Args[1:], os.Stdout, os.Stderr)) }
 
@@ -68,113 +61,63 @@ type options struct {
 
 func parse(args []string, stdout, stderr io.Writer) (options, error) {
 	var o options
-	set := flag.NewFlagSet("pipe", flag.ContinueOnError)
-	set.SetOutput(stderr)
-	set.Usage = func() {} // a mistyped flag is told in one line
+	usage := commandline.Usage{Name: "pipe", Help: helpText, Shows: "its flags and file", Inputs: "; the input file is given with -pipe"}
+	err := usage.Parse(args, stdout, stderr, o.define, o.check)
+	return o, err
+}
+
+func (o *options) define(set *flag.FlagSet) {
 	set.StringVar(&o.pipe, "pipe", "", "pipe `file` (JSON); the built-in example if empty")
 	set.StringVar(&o.out, "out", "", "`folder` for pictures and CSV files; \"out\" beside the pipe file if empty")
 	set.IntVar(&o.elements, "elements", 40, "`number` of elements through the wall, 4 to 400")
 	set.Float64Var(&o.tolerance, "tolerance", 1e-4,
 		"error estimate allowed in a time step, as a `share` of the largest von Mises stress at the start")
-	err := set.Parse(args)
+}
+
+func (o *options) check() error {
 	switch {
-	case errors.Is(err, flag.ErrHelp):
-		fmt.Fprint(stdout, helpText)
-		set.SetOutput(stdout)
-		set.PrintDefaults()
-		return o, err
-	case err != nil:
-		err = errors.New("pipe: run it with -h for its flags and file") // the flag itself has been named
-	case set.NArg() > 0:
-		err = fmt.Errorf("pipe: %q is not a flag; the input file is given with -pipe", set.Arg(0))
 	case o.elements < 4 || o.elements > 400:
-		err = fmt.Errorf("pipe: -elements is %v, must be between 4 and 400", o.elements)
+		return fmt.Errorf("-elements is %v, must be between 4 and 400", o.elements)
 	case !(o.tolerance >= 1e-6 && o.tolerance <= 0.01):
-		err = fmt.Errorf("pipe: -tolerance is %v, must be between 1e-6 and 0.01", o.tolerance)
+		return fmt.Errorf("-tolerance is %v, must be between 1e-6 and 0.01", o.tolerance)
 	}
-	if err != nil {
-		fmt.Fprintln(stderr, err)
-	}
-	return o, err
+	return nil
 }
 
 // command is the program but for its exit.
 func command(args []string, stdout, stderr io.Writer) int {
 	o, err := parse(args, stdout, stderr)
-	if errors.Is(err, flag.ErrHelp) {
-		return done
-	}
 	if err != nil {
-		return refused
+		return commandline.Status(err)
 	}
 	p, err := o.read()
 	if err != nil {
 		fmt.Fprintln(stderr, err)
-		return refused
+		return commandline.Refused
 	}
 	r, err := newReport(p, o.settings)
 	if err != nil {
-		fmt.Fprintf(stderr, "pipe: %v\n", err)
-		return failed
+		return commandline.Fail(stderr, "pipe: %v", err)
 	}
 	r.write(stdout)
-	paths, err := r.files(o.folder())
+	paths, err := r.files(commandline.OutputFolder(o.out, o.pipe, commandline.SourceFolder()))
 	if err != nil {
-		fmt.Fprintf(stderr, "pipe: the files were not written: %v\n", err)
-		return failed
+		return commandline.Fail(stderr, "pipe: the files were not written: %v", err)
 	}
-	fmt.Fprintln(stdout)
-	for _, path := range paths {
-		fmt.Fprintf(stdout, "file: %s\n", relative(path))
+	commandline.End(stdout, "file", paths, caution)
+	if !r.checks.Passed() {
+		return commandline.Fail(stderr, "pipe: a check failed, see the list")
 	}
-	fmt.Fprintf(stdout, "\n%s\n", caution)
-	if !r.passed() {
-		fmt.Fprintln(stderr, "pipe: a check failed, see the list")
-		return failed
-	}
-	return done
+	return commandline.Done
 }
 
 func (o *options) read() (*pipe, error) {
 	if o.pipe == "" {
-		return readPipe(relative(filepath.Join(home(), "pipe.json")), builtIn)
+		return readPipe(commandline.Relative(filepath.Join(commandline.SourceFolder(), "pipe.json")), builtIn)
 	}
 	text, err := os.ReadFile(o.pipe)
 	if err != nil {
 		return nil, fmt.Errorf("pipe: %w", err)
 	}
 	return readPipe(o.pipe, text)
-}
-
-// home is the folder of the built-in example where its source is at hand, as with go run; otherwise empty.
-func home() string {
-	if _, file, _, ok := runtime.Caller(0); ok && filepath.IsAbs(file) {
-		if _, err := os.Stat(file); err == nil {
-			return filepath.Dir(file)
-		}
-	}
-	return ""
-}
-
-// folder is where the files go.
-func (o *options) folder() string {
-	switch {
-	case o.out != "":
-		return o.out
-	case o.pipe != "":
-		return filepath.Join(filepath.Dir(o.pipe), "out")
-	}
-	return filepath.Join(home(), "out")
-}
-
-// relative is a path as seen from the current folder, where that can be said.
-func relative(path string) string {
-	here, err := os.Getwd()
-	if err != nil || !filepath.IsAbs(path) {
-		return path
-	}
-	if short, err := filepath.Rel(here, path); err == nil {
-		return short
-	}
-	return path
 }

@@ -45,7 +45,7 @@ func readPipe(file string, text []byte) (*pipe, error) {
 		activation:  r.number("activation_energy_J_per_mol", 0, true, 1e6),
 	}
 	if ratio := p.outer / p.inner; r.err == nil && !(ratio >= 1.05 && ratio <= 10) {
-		r.fault(r.take("outer_radius_mm").at, "outer_radius_mm is %v, must be 1.05 to 10 times inner_radius_mm, %v", p.outer, p.inner)
+		r.fault(r.take("outer_radius_mm").Offset, "outer_radius_mm is %v, must be 1.05 to 10 times inner_radius_mm, %v", p.outer, p.inner)
 	}
 	return p, r.done()
 }

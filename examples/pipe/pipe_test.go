@@ -5,9 +5,11 @@ import (
 	"sync"
 	"testing"
 
-	"example.com/holdtime/bench/check"
 	"github.com/stretchr/testify/assert"
 	"github.com/stretchr/testify/require"
+
+	"example.com/holdtime/bench/check"
+	"example.com/holdtime/examples/newton"
 )
 
 func mustPipe(t *testing.T) *pipe {
@@ -46,7 +48,7 @@ func TestSteadyState(t *testing.T) {
 		assert.True(t, h.course.start().distance > 0.3, "%s: nothing was redistributed", h.name)
 		assert.Less(t, len(h.course.samples), 200, "%s: steps", h.name)
 	}
-	assert.True(t, mustReport(t).passed())
+	assert.True(t, mustReport(t).checks.Passed())
 }
 
 // With two points per element the errors fall with the third, second and fourth power of the element's length, and 8 elements
@@ -166,9 +168,9 @@ func TestGlobalNewtonIsQuadratic(t *testing.T) {
 		for _, l := range h.leaps {
 			require.NotNil(t, l.residuals, "%s, %g h", h.name, l.hours)
 			assert.LessOrEqual(t, len(l.residuals)-1, 9, "%s, %g h: %.1e", h.name, l.hours, l.residuals)
-			c := constant(l.residuals, l.rounding)
+			c := newton.Constant(l.residuals, l.rounding)
 			assert.True(t, c < 10, "%s, %g h: r(k+1)/r(k)² = %v", h.name, l.hours, c) // measured 1.3
-			if o, ok := newtonOrder(l.residuals, l.rounding); ok {
+			if o, ok := newton.Order(l.residuals, 100*l.rounding); ok {
 				seen++
 				assert.True(t, o > 1.7, "%s, %g h: order %v of %.1e", h.name, l.hours, o, l.residuals)
 			}
@@ -178,20 +180,7 @@ func TestGlobalNewtonIsQuadratic(t *testing.T) {
 		assert.Greater(t, e.solves, 200)
 	}
 	assert.Greater(t, seen, 2, "no sequence was long enough")
-	assert.True(t, constant([]float64{5e-3, 5e-4, 5e-5, 5e-6, 5e-7}, 1e-12) > 1e3, "a linear sequence must be seen")
-}
-
-// newtonOrder is how fast a sequence converges at its end, from its last three values above rounding: 2 for Newton's method
-// with the right tangent, 1 with a wrong one. It reports false when there are fewer, or when they are not near.
-func newtonOrder(residuals []float64, rounding float64) (float64, bool) {
-	for len(residuals) > 0 && residuals[len(residuals)-1] <= 100*rounding {
-		residuals = residuals[:len(residuals)-1]
-	}
-	if len(residuals) < 3 || residuals[len(residuals)-3] > 0.1 {
-		return 0, false
-	}
-	r := residuals[len(residuals)-3:]
-	return math.Log(r[2]/r[1]) / math.Log(r[1]/r[0]), true
+	assert.True(t, newton.Constant([]float64{5e-3, 5e-4, 5e-5, 5e-6, 5e-7}, 1e-12) > 1e3, "a linear sequence must be seen")
 }
 
 // Another pipe: thin or thick, any exponent, either sense of the gradient.

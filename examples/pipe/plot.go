@@ -12,6 +12,8 @@ import (
 	"gonum.org/v1/plot"
 	"gonum.org/v1/plot/plotter"
 	"gonum.org/v1/plot/vg"
+
+	"example.com/holdtime/examples/figure"
 )
 
 const (
@@ -27,8 +29,8 @@ func (r *report) files(folder string) (paths []string, err error) {
 		if err != nil {
 			return paths, err
 		}
-		f.title = fmt.Sprintf("%s: %s", r.title, h.describe())
-		written, err := f.write(folder, name)
+		f.Title = fmt.Sprintf("%s: %s", r.title, h.describe())
+		written, err := f.Save(folder, name)
 		if err != nil {
 			return paths, err
 		}
@@ -42,8 +44,8 @@ func (r *report) files(folder string) (paths []string, err error) {
 	if err != nil {
 		return paths, err
 	}
-	f.title = r.title + ": the way to the steady state"
-	written, err := f.write(folder, "approach")
+	f.Title = r.title + ": the way to the steady state"
+	written, err := f.Save(folder, "approach")
 	return append(paths, written...), err
 }
 
@@ -75,8 +77,8 @@ func (h *history) moments() (list []*sample) {
 }
 
 // wallFigure draws the stresses through the wall.
-func (h *history) wallFigure() (*figure, error) {
-	f := &figure{columns: 4, width: figureWidth, height: figureHeight}
+func (h *history) wallFigure() (*figure.Sheet, error) {
+	f := &figure.Sheet{Columns: 4, Width: figureWidth, Height: figureHeight}
 	var panels []*plot.Plot
 	for _, c := range []struct {
 		title string
@@ -87,21 +89,21 @@ func (h *history) wallFigure() (*figure, error) {
 		{"Radial stress", func(s wallStress) float64 { return s.radial }},
 		{"Von Mises stress", wallStress.mises},
 	} {
-		panel := newPanel(c.title, "Radius [mm]", "Stress [MPa]")
+		panel := figure.NewPanel(c.title, "Radius [mm]", "Stress [MPa]")
 		var err error
-		if f.legend, err = h.wallLines(panel, c.value); err != nil {
+		if f.Legend, err = h.wallLines(panel, c.value); err != nil {
 			return nil, err
 		}
 		panels = append(panels, panel)
 	}
 	pad(panels...)
-	f.panels = [][]*plot.Plot{panels[:2], panels[2:]}
+	f.Panels = [][]*plot.Plot{panels[:2], panels[2:]}
 	return f, nil
 }
 
 // wallLines are the profiles of one stress.
-func (h *history) wallLines(panel *plot.Plot, value func(wallStress) float64) (legend []entry, err error) {
-	colours := []color.Color{purple, blue, sky, green, orange, vermillion}
+func (h *history) wallLines(panel *plot.Plot, value func(wallStress) float64) (legend []figure.Entry, err error) {
+	colours := []color.Color{figure.Purple, figure.Blue, figure.Sky, figure.Green, figure.Orange, figure.Vermillion}
 	list := h.moments()
 	for i, s := range list[:len(list)-1] {
 		bore, outside := h.wall.surface(s.condition)
@@ -109,22 +111,22 @@ func (h *history) wallLines(panel *plot.Plot, value func(wallStress) float64) (l
 		for k := range h.wall.points {
 			x, y = append(x, h.wall.points[k].radius), append(y, value(s.stress[k]))
 		}
-		line, err := addLine(panel, pairs(append(x, h.wall.outer), append(y, value(outside))), colours[i%len(colours)], 1.5)
+		line, err := figure.AddLine(panel, figure.Pairs(append(x, h.wall.outer), append(y, value(outside))), colours[i%len(colours)], 1.5)
 		if err != nil {
 			return nil, err
 		}
-		name := grouped(s.time, 0) + " h"
+		name := figure.Grouped(s.time, 0) + " h"
 		if i == 0 {
 			name = "elastic start"
 		}
-		legend = append(legend, entry{name, line})
+		legend = append(legend, figure.NewEntry(name, line))
 	}
 	end := list[len(list)-1]
 	var x, y []float64
 	for k := 0; k < len(h.wall.points); k += max(1, len(h.wall.points)/16) {
 		x, y = append(x, h.wall.points[k].radius), append(y, value(end.stress[k]))
 	}
-	marks, err := addMarks(panel, pairs(x, y), color.Black)
+	marks, err := figure.AddMarks(panel, figure.Pairs(x, y), figure.Black)
 	if err != nil {
 		return nil, err
 	}
@@ -132,25 +134,25 @@ func (h *history) wallLines(panel *plot.Plot, value func(wallStress) float64) (l
 	for _, radius := range h.wall.nodes {
 		x, y = append(x, radius), append(y, value(h.exact.at(radius)))
 	}
-	line, err := addLine(panel, pairs(x, y), color.Black, 1.2, 5, 3)
+	line, err := figure.AddLine(panel, figure.Pairs(x, y), figure.Black, 1.2, 5, 3)
 	if err != nil {
 		return nil, err
 	}
 	panel.X.Min, panel.X.Max = h.wall.inner, h.wall.outer
-	return append(legend, entry{grouped(end.time, 0) + " h", marks}, entry{"steady state, " + h.against, line}), nil
+	return append(legend, figure.NewEntry(figure.Grouped(end.time, 0)+" h", marks), figure.NewEntry("steady state, "+h.against, line)), nil
 }
 
 // approachFigure draws how both cases come to rest.
-func (r *report) approachFigure() (*figure, error) {
-	hoop := newPanel("Hoop stress at both surfaces", "Time [h]", "Stress [MPa]")
-	mises := newPanel("Von Mises stress at both surfaces", "Time [h]", "Stress [MPa]")
-	velocity := newPanel("Radial velocity of the bore", "Time [h]", "Velocity [µm per 1000 h]")
-	rest := newPanel("Largest distance of any stress from the steady state", "Time [h]", "Distance, over the von Mises stress")
-	rest.Y.Tick.Marker = decades{1}
-	f := &figure{columns: 3, width: figureWidth, height: figureHeight, panels: [][]*plot.Plot{{hoop, mises}, {velocity, rest}}}
+func (r *report) approachFigure() (*figure.Sheet, error) {
+	hoop := figure.NewPanel("Hoop stress at both surfaces", "Time [h]", "Stress [MPa]")
+	mises := figure.NewPanel("Von Mises stress at both surfaces", "Time [h]", "Stress [MPa]")
+	velocity := figure.NewPanel("Radial velocity of the bore", "Time [h]", "Velocity [µm per 1000 h]")
+	rest := figure.NewPanel("Largest distance of any stress from the steady state", "Time [h]", "Distance, over the von Mises stress")
+	rest.Y.Tick.Marker = figure.Decades{Most: 8}
+	f := &figure.Sheet{Columns: 3, Width: figureWidth, Height: figureHeight, Panels: [][]*plot.Plot{{hoop, mises}, {velocity, rest}}}
 	first := math.Inf(-1)
 	for i, h := range r.cases {
-		colour := []color.Color{blue, vermillion}[i]
+		colour := []color.Color{figure.Blue, figure.Vermillion}[i]
 		first = math.Max(first, math.Log10(h.course.samples[1].time))
 		if _, err := h.surfaceLines(hoop, colour, func(s wallStress) float64 { return s.hoop }); err != nil {
 			return nil, err
@@ -162,11 +164,11 @@ func (r *report) approachFigure() (*figure, error) {
 		if err := h.restLines(velocity, rest, colour); err != nil {
 			return nil, err
 		}
-		f.legend = append(f.legend, legend...)
+		f.Legend = append(f.Legend, legend...)
 	}
-	f.legend = append(f.legend[:2], append(f.legend[3:5], f.legend[5])...) // the steady state once
+	f.Legend = append(f.Legend[:2], append(f.Legend[3:5], f.Legend[5])...) // the steady state once
 	for _, panel := range []*plot.Plot{hoop, mises, velocity, rest} {
-		panel.X.Tick.Marker = decades{1}
+		panel.X.Tick.Marker = figure.Decades{Most: 8}
 		panel.X.Min = first
 	}
 	pad(hoop, mises, velocity, rest)
@@ -174,25 +176,29 @@ func (r *report) approachFigure() (*figure, error) {
 }
 
 // surfaceLines are a stress at the bore (full) and outside (dashed) over the logarithm of time, and where it is going.
-func (h *history) surfaceLines(panel *plot.Plot, colour color.Color, value func(wallStress) float64) ([]entry, error) {
+func (h *history) surfaceLines(panel *plot.Plot, colour color.Color, value func(wallStress) float64) ([]figure.Entry, error) {
 	var x, inside, outside []float64
 	for k := range h.course.samples[1:] {
 		s := &h.course.samples[k+1]
 		bore, outer := h.wall.surface(s.condition)
 		x, inside, outside = append(x, math.Log10(s.time)), append(inside, value(bore)), append(outside, value(outer))
 	}
-	full, err := addLine(panel, pairs(x, inside), colour, 1.6)
+	full, err := figure.AddLine(panel, figure.Pairs(x, inside), colour, 1.6)
 	if err != nil {
 		return nil, err
 	}
-	dashed, err := addLine(panel, pairs(x, outside), colour, 1.6, 6, 3)
+	dashed, err := figure.AddLine(panel, figure.Pairs(x, outside), colour, 1.6, 6, 3)
 	if err != nil {
 		return nil, err
 	}
 	last := x[len(x)-1]
-	marks, err := addMarks(panel, plotter.XYs{{X: last, Y: value(h.exact.at(h.wall.inner))},
-		{X: last, Y: value(h.exact.at(h.wall.outer))}}, color.Black)
-	return []entry{{"bore, " + h.name, full}, {"outside, " + h.name, dashed}, {"steady state: Bailey, quadrature", marks}}, err
+	marks, err := figure.AddMarks(panel, plotter.XYs{{X: last, Y: value(h.exact.at(h.wall.inner))},
+		{X: last, Y: value(h.exact.at(h.wall.outer))}}, figure.Black)
+	if err != nil {
+		return nil, err
+	}
+	return []figure.Entry{figure.NewEntry("bore, "+h.name, full), figure.NewEntry("outside, "+h.name, dashed),
+		figure.NewEntry("steady state: Bailey, quadrature", marks)}, nil
 }
 
 // restLines are the velocity of the bore and the distance from the steady state over the logarithm of time.
@@ -203,15 +209,23 @@ func (h *history) restLines(velocity, rest *plot.Plot, colour color.Color) error
 		x, d = append(x, math.Log10(s.time)), append(d, math.Log10(s.distance))
 		middle, v = append(middle, math.Log10((s.time+h.course.samples[k].time)/2)), append(v, 1e6*s.velocity)
 	}
-	if _, err := addLine(velocity, pairs(middle, v), colour, 1.6); err != nil {
+	if _, err := figure.AddLine(velocity, figure.Pairs(middle, v), colour, 1.6); err != nil {
 		return err
 	}
 	exact := 1e6 * h.exact.velocity / h.wall.inner
-	if _, err := addMarks(velocity, plotter.XYs{{X: middle[len(middle)-1], Y: exact}}, color.Black); err != nil {
+	if _, err := figure.AddMarks(velocity, plotter.XYs{{X: middle[len(middle)-1], Y: exact}}, figure.Black); err != nil {
 		return err
 	}
-	_, err := addLine(rest, pairs(x, d), colour, 1.6)
+	_, err := figure.AddLine(rest, figure.Pairs(x, d), colour, 1.6)
 	return err
+}
+
+// pad leaves some room above and below the curves.
+func pad(panels ...*plot.Plot) {
+	for _, p := range panels {
+		room := 0.04 * (p.Y.Max - p.Y.Min)
+		p.Y.Min, p.Y.Max = p.Y.Min-room, p.Y.Max+room
+	}
 }
 
 // table writes the stresses at the round hours as CSV.

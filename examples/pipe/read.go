@@ -2,156 +2,89 @@ package main
 
 import (
 	"bytes"
-	"encoding/json"
-	"fmt"
-	"io"
 	"strconv"
-	"strings"
-	"unicode/utf8"
+
+	"example.com/holdtime/examples/jsontree"
+	"example.com/holdtime/examples/position"
 )
 
-// inputError says what is wrong in an input file, and where.
-type inputError struct {
-	File         string
-	Line, Column int // counted from 1; the column counts characters
-	Text         string
-}
-
-func (e *inputError) Error() string {
-	return fmt.Sprintf("%s:%d:%d: %s", e.File, e.Line, e.Column, e.Text)
-}
-
-// record is one flat JSON object of texts and numbers. Each field is asked for by name; the first fault is kept and makes
-// every later reading return zero, so that a file is read in straight lines and asked once at the end.
+// record is one flat JSON object of texts and numbers. Each field is asked for by name; the first fault is kept and makes every
+// later one go unheard, so that a file is read in straight lines and asked once at the end.
 type record struct {
-	file   string
-	text   []byte
-	fields []*field
+	src    *position.Source
+	fields []jsontree.Field
+	asked  map[string]bool
 	err    error
 }
 
-// field is one name and value.
-type field struct {
-	name  string
-	at    int // offset of the value
-	value json.Token
-	asked bool
-}
-
-// readRecord splits a file into fields: a flat object and nothing after it, every name once.
+// readRecord splits a file into fields.
 func readRecord(file string, text []byte) *record {
-	r := &record{file: file, text: bytes.TrimPrefix(text, []byte("\uFEFF"))}
-	d := json.NewDecoder(bytes.NewReader(r.text))
-	d.UseNumber()
-	if open := r.next(d); r.err == nil && open.value != json.Delim('{') {
-		r.fault(open.at, "the file must be an object {…}")
+	r := &record{src: position.NewSource(file, text), asked: map[string]bool{}}
+	if start := bytes.TrimLeft(r.src.Text, " \t\r\n"); bytes.HasPrefix(start, []byte("[")) { // whatever is in it
+		r.fault(len(r.src.Text)-len(start), "the file must be an object {…}")
+		return r
 	}
-	for r.err == nil && d.More() {
-		name := r.next(d)
-		word, ok := name.value.(string)
-		if r.err == nil && !ok {
-			r.fault(name.at, "the name of a field must be a text in quotation marks")
-		}
-		if r.err == nil && r.find(word) != nil {
-			r.fault(name.at, "the field %q is given twice", word)
-		}
-		value := r.next(d)
-		switch value.value.(type) {
-		case string, json.Number, nil:
+	root, err := jsontree.Read(r.src)
+	if err != nil {
+		r.err = err
+		return r
+	}
+	if root.Kind != jsontree.Object {
+		r.fault(root.Offset, "the file must be an object {…}")
+	}
+	for _, f := range root.Fields {
+		switch f.Value.Kind {
+		case jsontree.Number, jsontree.Text:
 		default:
-			r.fault(value.at, "%s must be a number or a text", word)
+			r.fault(f.Value.Offset, "%s must be a number or a text, not %s", f.Name, f.Value.Kind)
 		}
-		if value.value == nil && r.err == nil {
-			r.fault(value.at, "%s must be a number or a text, not null", word)
-		}
-		r.fields = append(r.fields, &field{word, value.at, value.value, false})
 	}
-	r.next(d) // the closing bracket
-	if after := bytes.TrimLeft(r.text[d.InputOffset():], " \t\r\n"); r.err == nil && len(after) > 0 {
-		r.fault(len(r.text)-len(after), "there is something after the end of the object")
-	}
+	r.fields = root.Fields
 	return r
 }
 
-// next reads one token.
-func (r *record) next(d *json.Decoder) field {
-	if r.err != nil {
-		return field{}
-	}
-	at := r.start(d)
-	token, err := d.Token()
-	if err == io.EOF || err == io.ErrUnexpectedEOF {
-		r.fault(len(r.text), "the file ends too early")
-	} else if err != nil {
-		r.fault(at, "not JSON: %v", err)
-	}
-	return field{at: at, value: token}
-}
-
-// start is where the next token begins: after blanks and a separator.
-func (r *record) start(d *json.Decoder) int {
-	at := int(d.InputOffset())
-	for at < len(r.text) && strings.IndexByte(" \t\r\n,:", r.text[at]) >= 0 {
-		at++
-	}
-	return at
-}
-
-// fault keeps the first inputError, at a byte offset.
+// fault keeps the first fault, at a byte offset.
 func (r *record) fault(offset int, format string, args ...any) {
-	if r.err != nil {
-		return
+	if r.err == nil {
+		r.err = r.src.Fault(offset, format, args...)
 	}
-	before := r.text[:min(max(offset, 0), len(r.text))]
-	line := bytes.LastIndexByte(before, '\n') + 1
-	r.err = &inputError{r.file, 1 + bytes.Count(before, []byte("\n")), 1 + utf8.RuneCount(before[line:]), fmt.Sprintf(format, args...)}
 }
 
-func (r *record) find(name string) *field {
+// take finds the value of a field that must be there.
+func (r *record) take(name string) *jsontree.Node {
+	r.asked[name] = true
 	for _, f := range r.fields {
-		if f.name == name {
-			return f
+		if f.Name == name {
+			return f.Value
 		}
 	}
-	return nil
-}
-
-// take finds a field that must be there.
-func (r *record) take(name string) *field {
-	f := r.find(name)
-	if f == nil {
-		r.fault(len(r.text), "the field %q is missing", name)
-		return &field{}
-	}
-	f.asked = true
-	return f
+	r.fault(len(r.src.Text), "the field %q is missing", name)
+	return &jsontree.Node{}
 }
 
 // title reads a text.
 func (r *record) title(name string) string {
-	f := r.take(name)
-	s, ok := f.value.(string)
-	if !ok {
-		r.fault(f.at, "%s must be a text", name)
+	n := r.take(name)
+	if n.Kind != jsontree.Text {
+		r.fault(n.Offset, "%s must be a text", name)
 	}
-	return s
+	return n.Text
 }
 
 // number reads a number between two bounds, the lower one allowed or not.
 func (r *record) number(name string, low float64, lowAllowed bool, high float64) float64 {
-	f := r.take(name)
-	n, ok := f.value.(json.Number)
-	if !ok {
-		r.fault(f.at, "%s must be a number", name)
+	n := r.take(name)
+	if n.Kind != jsontree.Number {
+		r.fault(n.Offset, "%s must be a number", name)
 		return 0
 	}
-	x, err := strconv.ParseFloat(string(n), 64)
+	x, err := strconv.ParseFloat(n.Text, 64)
 	sense := "above"
 	if lowAllowed {
 		sense = "at least"
 	}
 	if err != nil || !((x > low || lowAllowed && x == low) && x <= high) {
-		r.fault(f.at, "%s is %s, must be %s %v and at most %v", name, n, sense, low, high)
+		r.fault(n.Offset, "%s is %s, must be %s %v and at most %v", name, n.Text, sense, low, high)
 		return 0
 	}
 	return x
@@ -160,8 +93,8 @@ func (r *record) number(name string, low float64, lowAllowed bool, high float64)
 // done returns the first fault; a field that nobody asked for is one.
 func (r *record) done() error {
 	for _, f := range r.fields {
-		if !f.asked {
-			r.fault(f.at, "there is no field %q; run pipe with -h for the fields", f.name)
+		if !r.asked[f.Name] {
+			r.fault(f.Value.Offset, "there is no field %q; run pipe with -h for the fields", f.Name)
 		}
 	}
 	return r.err

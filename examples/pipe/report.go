@@ -3,6 +3,9 @@ package main
 import (
 	"fmt"
 	"math"
+
+	"example.com/holdtime/examples/checklist"
+	"example.com/holdtime/examples/newton"
 )
 
 // settings of a run.
@@ -15,10 +18,10 @@ type settings struct {
 type report struct {
 	*pipe
 	settings
-	cases    []*history
-	reduced  []meshError // the mesh study at one temperature, two points per element
-	full     []meshError // and three points, which lock
-	outcomes []outcome
+	cases   []*history
+	reduced []meshError // the mesh study at one temperature, two points per element
+	full    []meshError // and three points, which lock
+	checks  checklist.List
 }
 
 // history is the pipe at one distribution of temperature.
@@ -107,39 +110,19 @@ func (c *course) change(d *course) (largest float64) {
 	return largest
 }
 
-// outcome is a number held against its limit.
-type outcome struct {
-	name         string
-	value, limit float64
-	atLeast      bool // the value must not be below the limit; otherwise not above it
-}
-
-func (o outcome) passed() bool {
-	if o.atLeast {
-		return o.value >= o.limit
-	}
-	return o.value <= o.limit
-}
-
 const permille = 1e-3 // what is asked of stresses and rates
 
 // judge holds the numbers against their limits.
 func (r *report) judge() {
-	most := func(name string, value, limit float64) {
-		r.outcomes = append(r.outcomes, outcome{name, value, limit, false})
-	}
-	least := func(name string, value, limit float64) {
-		r.outcomes = append(r.outcomes, outcome{name, value, limit, true})
-	}
 	for _, h := range r.cases {
-		most(h.name+": elastic start at the points, from Lamé and Timoshenko", h.startError, permille)
-		most(h.name+": steady stresses at the points, from "+h.against, h.end.points, permille)
-		most(h.name+": steady stresses at both surfaces, from "+h.against, h.end.surfaces, permille)
-		most(h.name+": steady strain rates at the points, from "+h.against, h.end.rate, permille)
-		most(h.name+": steady velocity of the bore, from "+h.against, h.end.bore, permille)
-		most(h.name+": stresses at round hours, change with a tenth of the tolerance", h.timeError, 10*r.tolerance)
+		r.checks.AtMost(h.name+": elastic start at the points, from Lamé and Timoshenko", h.startError, permille)
+		r.checks.AtMost(h.name+": steady stresses at the points, from "+h.against, h.end.points, permille)
+		r.checks.AtMost(h.name+": steady stresses at both surfaces, from "+h.against, h.end.surfaces, permille)
+		r.checks.AtMost(h.name+": steady strain rates at the points, from "+h.against, h.end.rate, permille)
+		r.checks.AtMost(h.name+": steady velocity of the bore, from "+h.against, h.end.bore, permille)
+		r.checks.AtMost(h.name+": stresses at round hours, change with a tenth of the tolerance", h.timeError, 10*r.tolerance)
 	}
-	most("quadrature at one temperature, from Bailey", r.quadratureError(), 1e-10)
+	r.checks.AtMost("quadrature at one temperature, from Bailey", r.quadratureError(), 1e-10)
 	c, f := r.reduced[1], r.reduced[2]
 	for _, o := range []struct {
 		name         string
@@ -148,16 +131,16 @@ func (r *report) judge() {
 	}{{"stresses at the points", c.points, f.points, 2.8}, {"stresses at the surfaces", c.surfaces, f.surfaces, 1.9},
 		{"velocity of the bore", c.bore, f.bore, 3.7}} {
 		if o.fine > 1e-9 { // else it is rounding, as for a thin wall
-			least(fmt.Sprintf("mesh: order of the %s, %d to %d elements", o.name, c.elements, f.elements), order(o.coarse, o.fine), o.least)
+			r.checks.AtLeast(fmt.Sprintf("mesh: order of the %s, %d to %d elements", o.name, c.elements, f.elements), order(o.coarse, o.fine), o.least)
 		}
 	}
 	largest := 0.0
 	for _, h := range r.cases {
 		for _, l := range h.leaps {
-			largest = math.Max(largest, constant(l.residuals, l.rounding))
+			largest = math.Max(largest, newton.Constant(l.residuals, l.rounding))
 		}
 	}
-	most("Newton: largest r(k+1)/r(k)² below 1e-2, all leaps", largest, 100)
+	r.checks.AtMost("Newton: largest r(k+1)/r(k)² below 1e-2, all leaps", largest, 100)
 }
 
 // quadratureError holds the two solutions of the steady state at one temperature against each other.
@@ -169,14 +152,4 @@ func (r *report) quadratureError() (largest float64) {
 		largest = math.Max(largest, h.exact.at(radius).from(want))
 	}
 	return math.Max(largest, math.Abs(h.exact.velocity/(cylinder.VelocityAt(h.wall.inner)*h.wall.inner)-1))
-}
-
-// passed reports whether every number keeps its limit.
-func (r *report) passed() bool {
-	for _, o := range r.outcomes {
-		if !o.passed() {
-			return false
-		}
-	}
-	return true
 }

@@ -4,6 +4,9 @@ import (
 	"fmt"
 	"io"
 	"strings"
+
+	"example.com/holdtime/examples/figure"
+	"example.com/holdtime/examples/newton"
 )
 
 // write prints the report.
@@ -24,7 +27,7 @@ then the pipe creeps until at most %.0e of the strain rate of any point is elast
 	}
 	r.writeMeshes(w)
 	r.writeNewton(w)
-	r.writeOutcomes(w)
+	r.checks.Write(w)
 }
 
 func (h *history) writeCourse(w io.Writer) {
@@ -41,7 +44,7 @@ func (h *history) writeCourse(w io.Writer) {
 		if k > 0 {
 			velocity = fmt.Sprintf("%.4f", 1e6*s.velocity)
 		}
-		fmt.Fprintf(w, "%11s %8.2f  %8.2f   %8.2f  %8.2f  %8.2f   %8.2f %15s     %12.1e\n", grouped(s.time, 0), bore.hoop,
+		fmt.Fprintf(w, "%11s %8.2f  %8.2f   %8.2f  %8.2f  %8.2f   %8.2f %15s     %12.1e\n", figure.Grouped(s.time, 0), bore.hoop,
 			bore.axial, bore.mises(), outside.hoop, outside.axial, outside.mises(), velocity, s.distance)
 	}
 	e := h.course.effort
@@ -104,33 +107,11 @@ func (r *report) writeNewton(w io.Writer) {
 	for _, h := range r.cases {
 		fmt.Fprintf(w, "   %s\n", h.name)
 		for _, l := range h.leaps {
-			text := sequence(l.residuals)
+			text := newton.Text(l.residuals, "  ")
 			if l.residuals == nil {
 				text = "no equilibrium found from so far: a shorter step is needed"
 			}
-			fmt.Fprintf(w, "   %11s h  %s\n", grouped(l.hours, 0), text)
+			fmt.Fprintf(w, "   %11s h  %s\n", figure.Grouped(l.hours, 0), text)
 		}
-	}
-}
-
-func sequence(residuals []float64) string {
-	var words []string
-	for _, x := range residuals {
-		words = append(words, fmt.Sprintf("%.1e", x))
-	}
-	return strings.Join(words, "  ")
-}
-
-func (r *report) writeOutcomes(w io.Writer) {
-	fmt.Fprintf(w, "\nWHAT WAS CHECKED %77s %11s\n", "value", "limit")
-	for _, o := range r.outcomes {
-		verdict, sense := "pass", "≤"
-		if !o.passed() {
-			verdict = "FAIL"
-		}
-		if o.atLeast {
-			sense = "≥"
-		}
-		fmt.Fprintf(w, "   %s  %-84s %-9.2g %s %g\n", verdict, o.name, o.value, sense, o.limit)
 	}
 }

@@ -4,9 +4,10 @@ import (
 	"math"
 	"testing"
 
-	"example.com/holdtime/bench/check"
 	"github.com/stretchr/testify/require"
 	"gonum.org/v1/gonum/integrate/quad"
+
+	"example.com/holdtime/bench/check"
 )
 
 // The way between start and steady state, held against another way to compute it: for an elastically incompressible pipe in

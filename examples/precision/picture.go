@@ -7,104 +7,74 @@ import (
 	"gonum.org/v1/plot"
 	"gonum.org/v1/plot/plotter"
 	"gonum.org/v1/plot/vg"
-	"gonum.org/v1/plot/vg/draw"
 
 	"example.com/holdtime/examples/figure"
 )
 
 var palette = []color.Color{figure.Blue, figure.Vermillion, figure.Green, figure.Purple, figure.Orange}
 
-// picture draws work against precision, and the error achieved against the tolerance asked for.
-func picture(folder string, lines []line) ([]string, error) {
-	return figure.Save(folder, "precision", 26*vg.Centimeter, 12*vg.Centimeter, func(c draw.Canvas) error {
-		work, err := workPanel(lines)
-		if err != nil {
-			return err
-		}
-		kept, err := tolerancePanel(lines)
-		if err != nil {
-			return err
-		}
-		tiles := draw.Tiles{Rows: 1, Cols: 2, PadX: 10 * vg.Millimeter, PadTop: 3 * vg.Millimeter, PadBottom: 2 * vg.Millimeter,
-			PadLeft: 2 * vg.Millimeter, PadRight: 4 * vg.Millimeter}
-		work.Draw(tiles.At(c, 0, 0))
-		kept.Draw(tiles.At(c, 1, 0))
-		return nil
-	})
-}
-
-func logarithmic(p *plot.Plot) {
-	p.X.Scale, p.Y.Scale = plot.LogScale{}, plot.LogScale{}
-	p.X.Tick.Marker, p.Y.Tick.Marker = figure.Decades{Every: 2}, figure.Decades{}
-}
-
-func workPanel(lines []line) (*plot.Plot, error) {
-	p := plot.New()
-	p.Title.Text = "Work for an error"
-	p.X.Label.Text = "error achieved / largest stress"
-	p.Y.Label.Text = "time [µs]"
-	logarithmic(p)
-	p.X.Min, p.X.Max, p.Y.Min, p.Y.Max = 1e-13, 1, 0.1, 1e5
-	p.Add(plotter.NewGrid())
+// draw draws work against precision, and the error achieved against the tolerance asked for.
+func draw(folder string, lines []line) ([]string, error) {
+	work := logarithmic("Work for an error", "Error achieved, over the largest stress", "Time [µs]")
+	kept := logarithmic("Error for a tolerance", "Tolerance asked for", "Error achieved, over the largest stress")
+	sheet := figure.Sheet{Title: "What accuracy costs at one material point (invented data)", Panels: [][]*plot.Plot{{work, kept}},
+		Columns: 3, Width: 28 * vg.Centimeter, Height: 15 * vg.Centimeter}
 	for i, l := range lines {
-		walk, points, err := plotter.NewLinePoints(costs(l.walks))
+		walk, err := figure.AddLine(work, costs(l.walks), palette[i], 1.5)
 		if err != nil {
 			return nil, err
 		}
-		walk.Color, points.Color = palette[i], palette[i]
-		walk.Width = vg.Points(1.5)
-		points.Shape = draw.CircleGlyph{}
-		steps, err := plotter.NewLine(costs(l.steps))
+		marks, err := figure.AddMarks(work, costs(l.walks), palette[i])
 		if err != nil {
 			return nil, err
 		}
-		steps.Color, steps.Dashes = palette[i], []vg.Length{vg.Points(4), vg.Points(3)}
-		p.Add(walk, points, steps)
-		p.Legend.Add(l.name, walk, points)
-		if i == len(lines)-1 {
-			p.Legend.Add("the same, equal backward-Euler steps", steps)
+		if _, err := figure.AddLine(work, costs(l.steps), palette[i], 1.5, dashed...); err != nil {
+			return nil, err
 		}
+		if _, err := figure.AddLine(kept, tolerances(l.walks), palette[i], 1.5); err != nil {
+			return nil, err
+		}
+		if _, err := figure.AddMarks(kept, tolerances(l.walks), palette[i]); err != nil {
+			return nil, err
+		}
+		sheet.Legend = append(sheet.Legend, figure.NewEntry(l.name, walk, marks))
 	}
-	p.Legend.Left = true
-	p.Legend.Padding = vg.Points(2)
-	p.Legend.XOffs, p.Legend.YOffs = vg.Points(6), vg.Points(4)
-	return p, nil
-}
-
-func tolerancePanel(lines []line) (*plot.Plot, error) {
-	p := plot.New()
-	p.Title.Text = "Error for a tolerance (grey: equal)"
-	p.X.Label.Text = "tolerance asked for"
-	p.Y.Label.Text = "error achieved / largest stress"
-	logarithmic(p)
-	p.X.Min, p.X.Max, p.Y.Min, p.Y.Max = 1e-11, 1e-1, 1e-14, 1
-	p.Y.Tick.Marker = figure.Decades{Every: 2}
-	p.Add(plotter.NewGrid())
-	equal, err := plotter.NewLine(plotter.XYs{{X: 1e-10, Y: 1e-10}, {X: 1e-2, Y: 1e-2}})
+	equal, err := figure.AddLine(kept, plotter.XYs{{X: -10, Y: -10}, {X: -2, Y: -2}}, figure.Grey, 1.5)
 	if err != nil {
 		return nil, err
 	}
-	equal.Color = figure.Grey
-	p.Add(equal)
-	for i, l := range lines {
-		var at plotter.XYs
-		for _, r := range l.walks {
-			at = append(at, plotter.XY{X: r.tolerance, Y: math.Max(r.err, 1e-16)})
-		}
-		walk, points, err := plotter.NewLinePoints(at)
-		if err != nil {
-			return nil, err
-		}
-		walk.Color, points.Color = palette[i], palette[i]
-		points.Shape = draw.CircleGlyph{}
-		p.Add(walk, points)
-	}
-	return p, nil
+	steps := &plotter.Line{LineStyle: plotter.DefaultLineStyle}
+	steps.Color, steps.Width, steps.Dashes = figure.Black, 1.5, dashed
+	sheet.Legend = append(sheet.Legend, figure.NewEntry("equal backward-Euler steps, same colours", steps),
+		figure.NewEntry("error equal to the tolerance", equal))
+	work.X.Min, work.X.Max, work.Y.Min, work.Y.Max = -13, 0, 0, 5
+	kept.X.Min, kept.X.Max, kept.Y.Min, kept.Y.Max = -11, -1, -14, 0
+	return sheet.Save(folder, "precision")
 }
 
+var dashed = []vg.Length{5, 3}
+
+// logarithmic is a panel of decimal logarithms.
+func logarithmic(title, x, y string) *plot.Plot {
+	panel := figure.NewPanel(title, x, y)
+	for _, axis := range []*plot.Axis{&panel.X, &panel.Y} {
+		axis.Tick.Marker = figure.Decades{Most: 8}
+	}
+	return panel
+}
+
+// costs are the decimal logarithms of the times over those of the errors, which are shown down to 1e-13.
 func costs(runs []run) (at plotter.XYs) {
 	for _, r := range runs {
-		at = append(at, plotter.XY{X: math.Max(r.err, 1e-13), Y: float64(r.cost.Nanoseconds()) / 1e3})
+		at = append(at, plotter.XY{X: math.Max(math.Log10(r.err), -13), Y: math.Log10(float64(r.cost.Nanoseconds()) / 1e3)})
+	}
+	return at
+}
+
+// tolerances are the decimal logarithms of the errors, shown down to 1e-14, over those of the tolerances.
+func tolerances(runs []run) (at plotter.XYs) {
+	for _, r := range runs {
+		at = append(at, plotter.XY{X: math.Log10(r.tolerance), Y: math.Max(math.Log10(r.err), -14)})
 	}
 	return at
 }

@@ -2,11 +2,14 @@ package main
 
 import (
 	"bytes"
-	"os"
 	"path/filepath"
 	"testing"
 
 	"github.com/stretchr/testify/require"
+
+	"example.com/holdtime/examples/commandline"
+	"example.com/holdtime/examples/commandline/commandtest"
+	"example.com/holdtime/examples/figure/figuretest"
 )
 
 // TestWalksKeepTheirTolerance: against the closed forms every walk ends within three times its tolerance, and equal
@@ -25,15 +28,19 @@ func TestWalksKeepTheirTolerance(t *testing.T) {
 	}
 }
 
+func TestFlags(t *testing.T) {
+	commandtest.Helps(t, command, "usage: precision [flags]", "-out")
+	commandtest.Refuses(t, command, [][2]string{{"-nonsense", "run it with -h"}, {"file.json", `"file.json" is not a flag`}})
+}
+
 func TestCommandWritesItsPicture(t *testing.T) {
-	folder := t.TempDir()
-	var text bytes.Buffer
-	require.NoError(t, command([]string{"-out", folder}, &text))
-	require.Contains(t, text.String(), "Norton, n = 25")
-	for _, name := range []string{"precision.png", "precision.svg"} {
-		info, err := os.Stat(filepath.Join(folder, name))
-		require.NoError(t, err)
-		require.Greater(t, info.Size(), int64(10_000))
+	folder := filepath.Join(t.TempDir(), "new", "folder")
+	var text, failure bytes.Buffer
+	require.Equal(t, commandline.Done, command([]string{"-out", folder}, &text, &failure), failure.String())
+	for _, words := range []string{"Norton, n = 25", "equal steps", "precision.svg", "governing code"} {
+		require.Contains(t, text.String(), words)
 	}
-	require.Error(t, command([]string{"-nonsense"}, &text))
+	figuretest.PNG(t, filepath.Join(folder, "precision.png"), 1000, 600)
+	figuretest.SVG(t, filepath.Join(folder, "precision.svg"), "Norton, n = 25", "Tolerance asked for", "invented")
+	commandtest.FolderThatCannotBeMade(t, command, nil, "the picture was not drawn", "Norton, n = 25")
 }
