@@ -131,7 +131,8 @@ func (r *report) judge() {
 	}{{"stresses at the points", c.points, f.points, 2.8}, {"stresses at the surfaces", c.surfaces, f.surfaces, 1.9},
 		{"velocity of the bore", c.bore, f.bore, 3.7}} {
 		if o.fine > 1e-9 { // else it is rounding, as for a thin wall
-			r.checks.AtLeast(fmt.Sprintf("mesh: order of the %s, %d to %d elements", o.name, c.elements, f.elements), order(o.coarse, o.fine), o.least)
+			name := fmt.Sprintf("mesh: order of the %s, %d to %d elements", o.name, c.elements, f.elements)
+			r.checks.AtLeast(name, order(o.coarse, o.fine), o.least)
 		}
 	}
 	largest := 0.0
