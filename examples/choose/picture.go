@@ -122,8 +122,8 @@ func (b *block) draw(c draw.Canvas, entries int) error {
 	for i, r := range b.rows {
 		x := c.Min.X + vg.Length(i%2)*(c.Max.X-c.Min.X)/2
 		y := foot - (vg.Length(i/2)+0.6)*entryHeight
-		c.StrokeLines(style(i), []vg.Point{{X: x, Y: y}, {X: x + 11*vg.Millimeter, Y: y}})
-		text(c, r.label(), vg.Point{X: x + 13*vg.Millimeter, Y: y}, 9, draw.YCenter)
+		c.StrokeLines(style(i), []vg.Point{{X: x, Y: y}, {X: x + 9*vg.Millimeter, Y: y}})
+		text(c, r.label(), vg.Point{X: x + 10.5*vg.Millimeter, Y: y}, 9, draw.YCenter)
 	}
 	return nil
 }
@@ -132,7 +132,7 @@ func (b *block) draw(c draw.Canvas, entries int) error {
 func (r *row) label() string {
 	name := r.shortName(44)
 	if r.origin != inventedNumbers {
-		name = fmt.Sprintf("%s (%.2g MPa, %.0f °C)", r.shortName(33), r.stress, r.temperature-zeroCelsius)
+		name = fmt.Sprintf("%s (%.2g MPa, %.0f °C)", r.shortName(36), r.stress, r.temperature-zeroCelsius)
 	}
 	if r.report.Worst() == faulty {
 		name += "  (!)"
