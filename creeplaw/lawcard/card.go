@@ -138,12 +138,12 @@ func (r *reading) tested(v value, c conversion) (tested Range) {
 		if r.err != nil {
 			return tested
 		}
-		low, high := r.number(ends[0]), r.number(ends[1])
+		var low, high float64
 		if one.name == "temperature" {
-			low, high = c.temperature(low), c.temperature(high)
+			low, high = r.temperature(ends[0], c), r.temperature(ends[1], c)
 		} else {
-			low, _ = c.quantity(low, one.dim)
-			high, _ = c.quantity(high, one.dim)
+			low, _ = c.quantity(r.number(ends[0]), one.dim)
+			high, _ = c.quantity(r.number(ends[1]), one.dim)
 		}
 		if r.err == nil && !(low >= 0 && high >= low && high > 0 && finite(high)) {
 			r.fail(at, BadRange, "is from %s to %s, must ascend from zero or more", ends[0].text, ends[1].text)

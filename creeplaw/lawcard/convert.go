@@ -77,12 +77,18 @@ func (c conversion) factor(d creeplaw.Dimension) (*big.Float, bool) {
 	return result, true
 }
 
-// temperature takes a place on the temperature scale to K.
-func (c conversion) temperature(x float64) float64 {
-	if c.from.temperature == kelvin {
+// temperature reads a place on the temperature scale, in K. It goes by the decimal digits of the card, so that -273.15 degC is
+// zero.
+func (r *reading) temperature(v value, c conversion) float64 {
+	x := r.number(v)
+	if r.err != nil || c.from.temperature == kelvin {
 		return x
 	}
-	t := exact(x)
+	t, _, err := big.ParseFloat(v.text, 10, precision, big.ToNearestEven)
+	if err != nil {
+		r.fail(v, BadNumber, "is %s, which cannot be converted", quoted(v.text))
+		return x
+	}
 	t.Add(t, c.from.temperature.shift())
 	return rounded(t.Mul(t, c.from.temperature.degree()))
 }
@@ -106,7 +112,7 @@ func (c conversion) parameter(p creeplaw.Parameter) (float64, bool) {
 	case creeplaw.Proportional:
 		return c.quantity(p.Value, p.Dimension)
 	case creeplaw.OnTemperatureScale:
-		return c.temperature(p.Value), true
+		return p.Value, true // in K since it was read
 	case creeplaw.LogarithmOf:
 		f, ok := c.factor(p.Dimension)
 		if !ok {

@@ -36,8 +36,9 @@
 // where a number must be, a value that the law cannot have, anything after the card: each is a *CardError with the place as a
 // JSON Pointer, line and column, and no card is returned. Only the first fault is reported.
 //
-// Units convert on reading to those the host asks for. Every number that a change of units alters is rounded once, whatever its
-// power of the unit. A card written in the units it was read in gives back the same law, to the bit.
+// Units convert on reading to those the host asks for. Every number that a change of units alters is rounded once, or twice
+// where degrees Fahrenheit come in, whatever its power of the unit. A card written in the units it was read in gives back the
+// same law, to the bit.
 //
 // # Use
 //

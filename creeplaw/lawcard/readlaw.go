@@ -152,7 +152,7 @@ func (r *reading) rows(v value, member string, c conversion) (temperatures []flo
 	for i, row := range r.items(f["rows"], 2) {
 		cells := r.fields(row, []string{"temperature", member})
 		at := cells["temperature"]
-		t := c.temperature(r.number(at))
+		t := r.temperature(at, c)
 		if r.err == nil && places == nil && (!(t > 0) || i > 0 && t <= temperatures[i-1]) {
 			places = map[string]value{"temperature": at} // what the constructor will refuse
 		}
@@ -243,9 +243,10 @@ func (r *reading) parameters(v value, c conversion, forms [][]creeplaw.Parameter
 	}
 	values := make([]float64, len(forms[best]))
 	for i, p := range forms[best] {
-		values[i] = r.number(places[p.Name])
-		if p.Scale == creeplaw.OnTemperatureScale {
-			values[i] = c.temperature(values[i])
+		if at := places[p.Name]; p.Scale == creeplaw.OnTemperatureScale {
+			values[i] = r.temperature(at, c)
+		} else {
+			values[i] = r.number(at)
 		}
 	}
 	return best, values, places
@@ -333,13 +334,7 @@ func converted(law creeplaw.Law, c conversion) (creeplaw.Law, bool) {
 	if !ok {
 		return law, false
 	}
-	all := p.Parameters()
-	for i, one := range all {
-		if one.Scale == creeplaw.OnTemperatureScale {
-			all[i].Scale, all[i].Dimension = creeplaw.Proportional, creeplaw.Dimension{} // already in K
-		}
-	}
-	values, ok := c.parameters(all)
+	values, ok := c.parameters(p.Parameters())
 	if !ok {
 		return law, false
 	}
