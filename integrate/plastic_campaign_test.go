@@ -218,7 +218,7 @@ func (d *yieldingStep) take(t *testing.T, name string, sum *yieldTally) bool {
 // residual is |ln Δp - ln Δt - ln ṗ(σ, p, T)| of the end state. It means nothing without creep, or where the stress is below
 // what the trial stress resolves.
 func (d *yieldingStep) residual(mises float64) (float64, bool) {
-	if !(d.out.CreepStep > 1e-270) {
+	if !(d.out.CreepStep > 1e-270) || mises < 1e-13*3*shear*d.inc.Strain.EquivalentStrain() {
 		return 0, false
 	}
 	at := creeplaw.Point{Stress: mises, Strain: d.old.Equivalent + d.out.CreepStep, Temperature: d.inc.Temperature}

@@ -3,17 +3,18 @@ package integrate
 import "math"
 
 // soften finds the root connected to Δt → 0 for a creep law whose rate grows with strain. F can then rise, fall and rise again;
-// only its first crossing of zero, met coming from w = 0, which is plastic flow alone, continues the history. The search walks
-// up from where F is negative, in steps short enough that neither softening nor stress changes the slope by much, until F
-// changes sign; where F turns down before, no connected solution exists.
+// the history continues to its first crossing of zero, met coming from w = 0, which is plastic flow alone, but only while F rises:
+// where it falls, the solutions for longer and longer steps turn back, and rupture lies within the step. The search walks up from
+// where softening does not matter yet, in strides so short that neither softening nor stress changes the slope by much, until F
+// changes sign or falls.
 func (a *yieldFlow) soften(x *yielded) Code {
 	z, code := a.below(x)
 	if code != 0 || x.fraction == 0 {
 		return code
 	}
-	const most = 2000 // bounds the walk, which covers 40 decades
+	const most = 4000 // bounds the walk: that of the whole range of z without softening
+	odds := math.Exp(z)
 	for x.iterations = 0; x.iterations < most; x.iterations++ {
-		odds := math.Exp(z)
 		f, logFraction := a.evaluate(x, odds)
 		slope := a.slope(x, odds)
 		switch {
@@ -23,23 +24,36 @@ func (a *yieldFlow) soften(x *yielded) Code {
 			x.residual = math.Abs(f)
 			return 0
 		case f > 0:
-			return a.closeIn(x, z)
-		case !(slope > 0):
+			return a.closeIn(x, odds)
+		case !(slope > 0) || odds == a.corner && !(a.slopeBelowCorner(x) > 0):
 			return BeyondRupture
 		}
-		z += math.Min(-f/slope*(1+0x1p-20), a.stride(x))
+		next := odds * math.Exp(math.Min(-f/slope*(1+0x1p-20), a.stride(x, odds)))
+		if odds < a.corner && next > a.corner {
+			next = a.corner
+		}
+		odds = next
 	}
 	return NoConvergence
 }
 
-// stride is how far z may go at once: the slope's softening part grows in proportion to Δp.
-func (a *yieldFlow) stride(x *yielded) float64 { return 0.25 / (1 + math.Abs(a.hardening(x))) }
+// slopeBelowCorner is dF/dz at the corner on the side with plastic flow.
+func (a *yieldFlow) slopeBelowCorner(x *yielded) float64 {
+	side := *x
+	side.share = a.surface.shareOf(a.surface.slope0)
+	return a.slope(&side, a.corner)
+}
 
-// below returns a z below which F has no root, near to where it would vanish without softening. Softening only lowers F, so
-// that below the root for the strain at w = 0 there is none; nor is there one where the law still hardens and F is negative. If
-// the step does not creep, the fraction of x is 0.
+// stride is how far z may go at once: the slope's softening part grows in proportion to Δp, as long as stress is left to creep.
+func (a *yieldFlow) stride(x *yielded, odds float64) float64 {
+	return 0.25 / (1 + math.Abs(a.memory(x))/(1+x.share*odds))
+}
+
+// below returns a z below which F rises and has no root. Softening only lowers F, so that there is none below the root for the
+// strain at w = 0, nor where the law still hardens and F is negative; and where the softening share of the slope is slight, it was
+// less before. If the step does not creep, the fraction of x is 0.
 func (a *yieldFlow) below(x *yielded) (z float64, code Code) {
-	const longest, singular = 600, 40
+	const longest, singular, slight = 600, 40, 0.1
 	a.place(x, 0)
 	virgin := a.at(x)
 	x.rate = a.law.LogRate(virgin)
@@ -56,39 +70,39 @@ func (a *yieldFlow) below(x *yielded) (z float64, code Code) {
 		f, logFraction := a.evaluate(x, math.Exp(z))
 		virgin.Stress = x.kept * a.trial
 		frozen := logFraction - a.logTime - a.law.LogRate(virgin).Value
-		if f <= 0 && (frozen <= 0 || x.rate.ByLogStrain <= 0) {
+		if f <= 0 && (frozen <= 0 || x.rate.ByLogStrain <= 0) && a.memory(x) > -slight {
 			return z, 0
 		}
 	}
 	return 0, LawUndefined
 }
 
-// closeIn closes in on the root just passed: F > 0 at z, negative one stride before.
-func (a *yieldFlow) closeIn(x *yielded, high float64) Code {
-	low, z := high-0.25*(1+0x1p-10), high
-	walked := x.iterations
-	for ; x.iterations < walked+maxIterations; x.iterations++ {
-		f, logFraction := a.evaluate(x, math.Exp(z))
+// closeIn closes in on the root just passed: F > 0 at the odds, negative one stride before.
+func (a *yieldFlow) closeIn(x *yielded, odds float64) Code {
+	low, high := odds*math.Exp(-0.25*(1+0x1p-10)), odds
+	for last := x.iterations + maxIterations; x.iterations < last; x.iterations++ {
+		f, logFraction := a.evaluate(x, odds)
 		if math.IsNaN(f) {
 			return LawUndefined
 		}
+		slope := a.slope(x, odds)
 		x.residual = math.Abs(f)
 		if x.residual <= a.rounding(&x.relaxed, logFraction) {
 			return 0
 		}
 		if f > 0 {
-			high = z
+			high = odds
 		} else {
-			low = z
+			low = odds
 		}
-		next := z - f/a.slope(x, math.Exp(z))
-		if !(next > low && next < high) {
-			next = low + (high-low)/2
-		}
-		if next == z || next == low || next == high {
+		next := advance(odds, -f/slope, low, high)
+		if next == odds || next == low || next == high { // neighbouring numbers bracket the root
+			if x.residual <= 4*epsilon*math.Abs(slope) {
+				return 0
+			}
 			break
 		}
-		z = next
+		odds = next
 	}
 	return settled(x.residual)
 }
