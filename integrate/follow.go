@@ -102,7 +102,7 @@ func (m *Material) FollowStress(stress *tensor.Sym, end, old *State, start Condi
 
 func (m *Material) walk(old *State, start Conditions, inc *Increment, tolerance Tolerance, first float64) follower {
 	end := Conditions{inc.Strain, inc.Temperature}
-	return follower{material: m, tolerance: tolerance, path: path{start, end, inc.Dt, start == end}, state: *old, next: first}
+	return follower{material: m, tolerance: tolerance, path: path{start, end, inc.Dt, start == end}, state: *old, next: first, worst: 1}
 }
 
 func (t Tolerance) valid() bool {
@@ -141,6 +141,7 @@ type follower struct {
 	state       State
 	time        float64       // from the start of the path
 	next        float64       // length of the step to try next
+	worst       float64       // estimated error of the last accepted step over what was allowed, 1 before the first
 	largest     float64       // von Mises stress met
 	mises       float64       // at the present time
 	rates       [stages]rates // the first is that at the present time; the others of the step being tried
@@ -248,7 +249,7 @@ func (f *follower) beginSingular() Code {
 func (f *follower) advance() Code {
 	code := BeyondRupture
 	for range mostCuts {
-		h := f.path.length - f.time
+		h := f.corner() - f.time
 		if f.next < 0.999*h { // no crumb for the end
 			h = f.next
 		}
@@ -265,7 +266,7 @@ func (f *follower) advance() Code {
 		case code != 0 || math.IsNaN(worst):
 			f.next = h / 4
 		default:
-			f.next = h * math.Max(0.15, math.Min(6, 0.85*math.Pow(worst, -1.0/order)))
+			f.next = h * dirk.Factor(worst, f.worst)
 		}
 		if code == 0 && worst <= 1 {
 			f.accept(h, worst)
@@ -277,6 +278,24 @@ func (f *follower) advance() Code {
 		}
 	}
 	return code
+}
+
+// corner is the next time at which the temperature passes a point of the elastic tables, where the stress has a kink that a
+// step must not straddle, or the end of the path.
+func (f *follower) corner() float64 {
+	end, from, to := f.path.length, f.path.from.Temperature, f.path.to.Temperature
+	if f.material.isConstant || from == to {
+		return end
+	}
+	const passed = 1e-12 // of the path
+	for _, table := range [...]*Table{&f.material.elastic.Young, &f.material.elastic.Poisson} {
+		for _, t := range table.temperature {
+			if at := (t - from) / (to - from) * f.path.length; at > f.time+passed*f.path.length && at < end {
+				end = at
+			}
+		}
+	}
+	return end
 }
 
 // try runs the stages of a step of length h.
@@ -372,6 +391,7 @@ func (f *follower) judge(h float64) float64 {
 func (f *follower) accept(h, worst float64) {
 	f.course.Steps++
 	f.course.Error = math.Max(f.course.Error, worst)
+	f.worst = worst
 	f.time += h
 	if f.path.length-f.time <= 4*epsilon*f.path.length {
 		f.time = f.path.length

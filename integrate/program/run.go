@@ -201,7 +201,7 @@ func (r *Run) advance(until float64) error {
 		case err != nil || math.IsNaN(worst):
 			w.next = h / 4
 		default:
-			w.next = h * math.Max(0.15, math.Min(6, 0.85*math.Pow(worst, -1.0/dirk.Order)))
+			w.next = h * dirk.Factor(worst, w.last)
 		}
 		if err == nil && worst <= 1 {
 			r.accept(end, h, until, worst)
@@ -229,7 +229,7 @@ func (r *Run) accept(end point, h, until, worst float64) {
 	w := &r.walker
 	w.count.Steps++
 	r.worst = math.Max(r.worst, worst)
-	r.last.Error = worst
+	r.last.Error, w.last = worst, worst
 	if math.Abs(until-end.time) <= 4*0x1p-52*until {
 		end.time = until
 	}

@@ -55,6 +55,7 @@ type walker struct {
 	rates   [dirk.Stages]rates // the first is that of now, when fresh
 	fresh   bool
 	next    float64 // length of the step to try next
+	last    float64 // estimated error of the last accepted step over what was allowed, 1 before the first
 	largest float64 // von Mises stress met in the run
 	elastic float64 // elastic strain of that stress
 	count   Count
@@ -160,6 +161,7 @@ func (w *walker) refresh() {
 // length chooses the first step: the given one, or the time to creep a part of the elastic strain that a fourth-order step
 // could resolve.
 func (w *walker) length(first float64) {
+	w.last = 1
 	if w.next = first; first > 0 {
 		return
 	}

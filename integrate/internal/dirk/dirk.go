@@ -13,6 +13,8 @@
 // memory; a test holds them to the order conditions in rational arithmetic, which determine that they are right.
 package dirk
 
+import "math"
+
 // Shape of the method.
 const (
 	Stages   = 6
@@ -36,3 +38,17 @@ var Embedded = [Stages]float64{4586570599.0 / 29645900160, 0, 178811875.0 / 9450
 
 // Abscissae are the times of the stages in units of the step.
 var Abscissae = [Stages]float64{0, 1.0 / 2, 83.0 / 250, 31.0 / 50, 17.0 / 20, 1}
+
+// Factor chooses the next length of a step, as a multiple of this one, from the estimated errors of this step and of the accepted
+// one before, over what is allowed; before is 1 where there is none. After an accepted step (now <= 1) it heeds the trend of the
+// error as well as its size, which spares most rejections where the rate grows along the way (proportional-integral control;
+// K. Gustafsson, M. Lundh, G. Söderlind, BIT 28 (1988) 270–287, from memory).
+func Factor(now, before float64) float64 {
+	const shortest, longest = 0.15, 6
+	if !(now <= 1) {
+		return math.Max(shortest, 0.85*math.Pow(now, -1.0/Order))
+	}
+	const size, trend, smallest = 0.7 / Order, 0.4 / Order, 1e-4
+	f := 0.95 * math.Pow(now, -size) * math.Pow(math.Max(before, smallest), trend)
+	return math.Max(shortest, math.Min(longest, f))
+}

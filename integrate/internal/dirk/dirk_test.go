@@ -129,3 +129,22 @@ func TestMethodIsLStable(t *testing.T) {
 		}
 	}
 }
+
+// TestFactorSettles: under a steady error that goes with the power of the method the length settles where the error is a good
+// part of what is allowed, and a rejected step is always shortened.
+func TestFactorSettles(t *testing.T) {
+	length, before := 1e-3, 1.0
+	for range 60 {
+		now := length * length * length * length // allowed is 1 at length 1
+		f := Factor(now, before)
+		require.LessOrEqual(t, f, 6.0)
+		length, before = length*f, now
+	}
+	require.Less(t, length, 1.0)
+	require.Greater(t, length, 0.7)
+	for _, now := range []float64{1.0001, 3, 1e3, 1e30} {
+		require.Less(t, Factor(now, 1), 1.0)
+		require.GreaterOrEqual(t, Factor(now, 1), 0.15)
+	}
+	require.Equal(t, 6.0, Factor(0, 1), "no error at all")
+}
