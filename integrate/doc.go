@@ -5,6 +5,9 @@
 // step is backward Euler in stress, creep strain and internal variables, solved for any step size, and returns the exact
 // consistent tangent: the derivative of the discrete update by strain and by temperature.
 //
+// Options.Plasticity adds rate-independent plasticity, solved together with creep; plastic strain is kept apart from creep
+// strain.
+//
 // # Use
 //
 //	mat, err := integrate.New(integrate.NewIsotropic(160e3, 0.3), law, integrate.Options{})

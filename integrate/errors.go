@@ -14,7 +14,7 @@ const (
 	// What to do: mend the input; a smaller step does not help by itself. Explain names the quantity.
 	BadIncrement Code = 1 + iota
 
-	// BadState: the start state holds a NaN or infinite component, or a negative equivalent creep strain.
+	// BadState: the start state holds a NaN or infinite component, or a negative equivalent creep or plastic strain.
 	// Usual cause: state storage that was not zeroed, or that was unpacked from the wrong place.
 	// What to do: mend the storage. The zero State is virgin material. Explain names the quantity.
 	BadState

@@ -175,11 +175,11 @@ func (h *TabulatedHardening) rises(i int) error {
 
 // curve is the yield stress over plastic strain at one temperature: Voce's with a linear part, or a table.
 type curve struct {
-	yield, modulus, saturation, rate                     float64 // σ₀, H, Q, b
-	yieldByT, modulusByT, saturationByT, saturationRateT float64
-	table                                                []Table // instead of H, Q and b; yield is then only NaN or not
-	strains                                              []float64
-	temperature                                          float64
+	yield, modulus, saturation, rate             float64 // σ₀, H, Q, b
+	yieldByT, modulusByT, saturationByT, rateByT float64
+	table                                        []Table // instead of H, Q and b; yield is then only NaN or not
+	strains                                      []float64
+	temperature                                  float64
 }
 
 func (h LinearHardening) at(temperature float64) (c curve) {
@@ -195,7 +195,7 @@ func (h VoceHardening) at(temperature float64) (c curve) {
 	c.yield, c.yieldByT = h.Yield.At(temperature)
 	c.modulus, c.modulusByT = h.Modulus.At(temperature)
 	c.saturation, c.saturationByT = h.Saturation.At(temperature)
-	c.rate, c.saturationRateT = h.Rate.At(temperature)
+	c.rate, c.rateByT = h.Rate.At(temperature)
 	if sum := c.modulus + c.saturation + c.rate; math.IsNaN(sum) {
 		c.yield = sum
 	}
@@ -221,11 +221,15 @@ func (c *curve) stress(strain float64) (value, byStrain, byT float64) {
 		past := strain - l.from
 		return l.value + l.slope*past, l.slope, l.valueByT + l.slopeByT*past
 	}
-	rest := math.Exp(-c.rate * strain)
-	value = c.yield + c.modulus*strain - c.saturation*math.Expm1(-c.rate*strain)
-	byStrain = c.modulus + c.saturation*c.rate*rest
-	byT = c.yieldByT + c.modulusByT*strain - c.saturationByT*math.Expm1(-c.rate*strain) +
-		c.saturation*rest*strain*c.saturationRateT
+	value, byStrain = c.yield+c.modulus*strain, c.modulus
+	byT = c.yieldByT + c.modulusByT*strain
+	if c.saturation == 0 && c.saturationByT == 0 {
+		return value, byStrain, byT
+	}
+	gone, left := -math.Expm1(-c.rate*strain), math.Exp(-c.rate*strain)
+	value += c.saturation * gone
+	byStrain += c.saturation * c.rate * left
+	byT += c.saturationByT*gone + c.saturation*left*strain*c.rateByT
 	return value, byStrain, byT
 }
 

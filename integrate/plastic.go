@@ -22,11 +22,18 @@ import (
 // with the trial von Mises stress q of the step and all of σₑ, p, κ, T at its end. Δt = 0 is plasticity alone. The tangent is
 // exact and symmetric. Where plastic flow sets in it has a corner: a step that ends at the yield stress without plastic strain
 // has the tangent of the side without plastic flow, and so has one whose trial stress is above the yield stress by no more than
-// its own rounding. Heating alone can cause yielding, because σy falls with temperature.
+// its own rounding. At a strain of a tabulated curve the tangent is that of the part the step ends in. Beside perfect plasticity
+// the tangent has no stiffness along s: that is correct, and a host whose structure is unloaded far in one step does well to
+// start from an elastic iteration. Heating alone can cause yielding, because σy falls with temperature.
 //
-// Explicitly not covered: kinematic hardening, a yield stress that depends on the rate, and laws with internal variables
-// (creeplaw.Evolving), for which New returns a *CombinationError. Laws that soften with strain are followed from plastic flow
-// alone, as the limit of vanishing creep.
+// A creep law that softens with strain is followed from plastic flow alone, the limit of vanishing creep; where the solutions for
+// longer and longer steps turn back, the step is beyond rupture.
+//
+// Not covered: kinematic hardening, a yield stress that depends on the rate, and laws with internal variables
+// (creeplaw.Evolving), for which New returns a *CombinationError.
+//
+// The yield stress is a material's own at the temperatures of the component: a published one is a starting point, not design
+// data, and the governing code says what may be used in an assessment.
 //
 // Sources: R. von Mises, Mechanik der festen Körper im plastisch-deformablen Zustand, Nachr. Ges. Wiss. Göttingen (1913)
 // 582–592; J. C. Simo, T. J. R. Hughes, Computational Inelasticity, Springer 1998, chapter 3, for the return along the trial
@@ -49,6 +56,18 @@ const (
 	// strain would.
 	RemembersInelastic
 )
+
+// Plasticity returns the plasticity the material was built with; its Hardening is nil if there is none.
+func (m *Material) Plasticity() Plasticity {
+	if m.plastic == nil {
+		return Plasticity{}
+	}
+	p := Plasticity{Hardening: m.plastic.hardening}
+	if m.plastic.inelastic {
+		p.Memory = RemembersInelastic
+	}
+	return p
+}
 
 // CombinationError says that a material was asked for with two properties that this package does not combine.
 type CombinationError struct {

@@ -315,6 +315,8 @@ func TestPlasticPacking(t *testing.T) {
 	m := plastic(t, law, integrate.LinearHardening{Yield: integrate.Constant(100)}, integrate.RemembersCreep)
 	plain := material(t, law)
 	require.Equal(t, plain.StateLength()+7, m.StateLength())
+	require.Nil(t, plain.Plasticity().Hardening)
+	require.NotNil(t, m.Plasticity().Hardening)
 	s := integrate.State{Creep: tensor.Sym{1, 2, 3, 4, 5, 6}, Equivalent: 7, Plastic: tensor.Sym{8, 9, 10, 11, 12, 13}, EquivalentPlastic: 14}
 	packed := make([]float64, m.StateLength())
 	m.PackState(packed, &s)

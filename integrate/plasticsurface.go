@@ -79,8 +79,9 @@ func saturate(a, b float64) float64 {
 		x = math.Max(x, math.Log(a/(a-b+above)))
 	}
 	for range most {
-		rest := a * math.Exp(-x)
-		step := (b - x + a*math.Expm1(-x)) / (1 + rest)
+		gone := a * math.Expm1(-x)
+		rest := a + gone // good enough for a slope
+		step := (b - x + gone) / (1 + rest)
 		x += step
 		if !(step > 2*epsilon*(x+b/(1+rest))) {
 			break
