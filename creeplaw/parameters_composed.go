@@ -25,9 +25,9 @@ func numberedLaw(i int) string { return fmt.Sprintf("law %d", i+1) }
 func parametersOf(laws []Law) []Parameter {
 	var all partly
 	for i, law := range laws {
-		all.add(numberedLaw(i), law)
+		all.law(numberedLaw(i), law)
 	}
-	return all
+	return all.list()
 }
 
 // laws rebuilds the parts of a sum or the like.
@@ -67,9 +67,9 @@ func (s Series) WithParameters(values []float64) (Law, error) {
 // Parameters returns those of the law, "law: …", and of the factor, "temperature factor: …".
 func (t Thermal) Parameters() []Parameter {
 	var all partly
-	all.add(thatLaw, t.Law())
-	all.add(thatFactor, t.factor)
-	return all
+	all.law(thatLaw, t.Law())
+	all.factor(thatFactor, t.factor)
+	return all.list()
 }
 
 // WithParameters rebuilds law and factor.
@@ -87,9 +87,9 @@ func (t Thermal) WithParameters(values []float64) (Law, error) {
 func (t Threshold) Parameters() []Parameter {
 	stress := positiveNumber("threshold stress", inStress)
 	stress.Value = t.threshold
-	all := partly{stress}
-	all.add(thatLaw, t.Law())
-	return all
+	all := partly{parameters: []Parameter{stress}}
+	all.law(thatLaw, t.Law())
+	return all.list()
 }
 
 // WithParameters rebuilds the law and puts the threshold before it.
@@ -105,8 +105,11 @@ func (t Threshold) WithParameters(values []float64) (Law, error) {
 
 // Parameters returns the temperatures, "temperature 1" and so on, and those of the laws, "law 1: …" and so on.
 func (t Tabulated) Parameters() []Parameter {
-	all := partly(numberedTemperatures(t.table.temperatures))
-	return append(all, parametersOf(t.Laws())...)
+	all := partly{parameters: numberedTemperatures(t.table.temperatures)}
+	for i, law := range t.Laws() {
+		all.law(numberedLaw(i), law)
+	}
+	return all.list()
 }
 
 // WithParameters rebuilds the table, with the same options.
@@ -145,13 +148,13 @@ func factorTableForm(options TableOptions) func(v []float64) form[TemperatureFac
 // Parameters returns those of the law within, "law: …", which stay in its own units.
 func (c Converted) Parameters() []Parameter {
 	var all partly
-	all.add(thatLaw, c.Law())
-	for i := range all {
-		if all[i].Scale != OnTemperatureScale {
-			fixed(all[i : i+1]...)
+	all.law(thatLaw, c.Law())
+	for i, p := range all.parameters {
+		if p.Scale != OnTemperatureScale {
+			fixed(all.parameters[i : i+1]...)
 		}
 	}
-	return all
+	return all.parameters
 }
 
 // WithParameters rebuilds the law within, in its own units.
@@ -175,6 +178,22 @@ func arrheniusAtForm([]float64) form[TemperatureFactor] {
 		[]Parameter{positiveNumber("activation energy", dimensionless), temperatureNumber("reference temperature")},
 		func(v []float64) (TemperatureFactor, error) { return NewArrheniusAt(v[0], v[1]) },
 	}
+}
+
+// Parameters returns the activation energy, and the reference temperature if there is one.
+func (a Arrhenius) Parameters() []Parameter { return a.orOne().Parameters() }
+
+// WithParameters builds the factor from other values.
+func (a Arrhenius) WithParameters(values []float64) (TemperatureFactor, error) {
+	return a.orOne().WithParameters(values)
+}
+
+// orOne is how the factor was built; the zero Arrhenius, the factor one, as if from no activation energy.
+func (a Arrhenius) orOne() given[TemperatureFactor] {
+	if a.arguments == nil {
+		return remember(arrheniusForm, 0)
+	}
+	return a.given
 }
 
 // twoActivations are the parameters both forms of a TwoArrhenius have.

@@ -74,7 +74,7 @@ func damageNumbers(p *KachanovRabotnovParameters) []Parameter {
 	if p.ReferenceStress == 0 {
 		creep, damage = perPower(p.StressExponent), perPower(p.DamageStressExponent)
 	}
-	all := partly{
+	all := partly{parameters: []Parameter{
 		positiveNumber("prefactor", creep).of(p.Prefactor),
 		positiveNumber("stress exponent", dimensionless).of(p.StressExponent),
 		positiveNumber("damage prefactor", damage).of(p.DamagePrefactor),
@@ -82,13 +82,13 @@ func damageNumbers(p *KachanovRabotnovParameters) []Parameter {
 		positiveNumber("damage exponent", dimensionless).of(p.DamageExponent),
 		shareNumber("share of the greatest principal stress in the rupture stress").of(p.RuptureStress.Principal),
 		shareNumber("share of the mean stress in the rupture stress").of(p.RuptureStress.Mean),
-	}
+	}}
 	if p.ReferenceStress != 0 {
-		all = append(all, positiveNumber("reference stress", inStress).of(p.ReferenceStress))
+		all.parameters = append(all.parameters, positiveNumber("reference stress", inStress).of(p.ReferenceStress))
 	}
-	all.add(creepFactor, p.CreepTemperature)
-	all.add(damageFactor, p.DamageTemperature)
-	return all
+	all.factor(creepFactor, p.CreepTemperature)
+	all.factor(damageFactor, p.DamageTemperature)
+	return all.list()
 }
 
 func shareNumber(name string) Parameter { return Parameter{Name: name, High: 1} }
@@ -124,7 +124,7 @@ func (c *cavitating) parameters() []Parameter {
 	if p == nil {
 		return nil
 	}
-	all := partly{
+	all := partly{parameters: []Parameter{
 		positiveNumber("prefactor", perTime).of(p.Prefactor),
 		positiveNumber("stress coefficient", perStress).of(p.StressCoefficient),
 		positiveNumber("hardening", inStress).of(p.Hardening),
@@ -133,10 +133,10 @@ func (c *cavitating) parameters() []Parameter {
 		positiveNumber("cavitation", dimensionless).of(p.Cavitation),
 		positiveNumber("triaxiality exponent", dimensionless).of(p.TriaxialityExponent),
 		shareNumber("cavitation at rupture").of(p.RuptureCavitation),
-	}
-	all.add(creepFactor, p.CreepTemperature)
-	all.add(ageingFactor, p.AgeingTemperature)
-	return all
+	}}
+	all.factor(creepFactor, p.CreepTemperature)
+	all.factor(ageingFactor, p.AgeingTemperature)
+	return all.list()
 }
 
 func (c *cavitating) rebuilt(name string, values []float64) (q CavitationParameters, err error) {

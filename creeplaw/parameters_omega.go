@@ -29,9 +29,9 @@ func (o Omega) Parameters() []Parameter {
 	case o.initial == nil:
 		return nil
 	}
-	all := partly{positiveNumber(acceleration, dimensionless).of(o.omega)}
-	all.add("initial rate", o.InitialRate())
-	return all
+	all := partly{parameters: []Parameter{positiveNumber(acceleration, dimensionless).of(o.omega)}}
+	all.law("initial rate", o.InitialRate())
+	return all.list()
 }
 
 // WithParameters rebuilds the law.

@@ -53,7 +53,8 @@ const (
 	// of the scale, where a difference of temperatures does not.
 	OnTemperatureScale
 	// FixedUnits is a number that belongs to units of the law's own, whatever those of the host: the numbers of a law in
-	// other units than its own (InUnits), or of one that is tied to SI.
+	// other units than its own (InUnits), of one that is tied to SI, or of one with a user's function in it. With one of them
+	// among its parameters a law cannot be taken to other units by its numbers.
 	FixedUnits
 )
 
@@ -128,7 +129,21 @@ func temperatureNumber(name string) Parameter {
 }
 
 // partly gathers the parameters of the parts of a composed law.
-type partly []Parameter
+type partly struct {
+	parameters []Parameter
+	tied       bool // to units: a part has none, and works in the units it was written for
+}
+
+func (all *partly) law(name string, part Law) {
+	n := len(all.parameters)
+	all.add(name, part)
+	if len(all.parameters) == n {
+		all.tied = true
+	}
+}
+
+// factor adds those of a temperature factor, which knows no units; nil is none.
+func (all *partly) factor(name string, part TemperatureFactor) { all.add(name, part) }
 
 func (all *partly) add(name string, part any) {
 	p, ok := part.(interface{ Parameters() []Parameter })
@@ -137,8 +152,16 @@ func (all *partly) add(name string, part any) {
 	}
 	for _, one := range p.Parameters() {
 		one.Name = name + ": " + one.Name
-		*all = append(*all, one)
+		all.parameters = append(all.parameters, one)
 	}
+}
+
+// list returns them; where they are tied no number changes with the units.
+func (all *partly) list() []Parameter {
+	if all.tied {
+		fixed(all.parameters...)
+	}
+	return all.parameters
 }
 
 // rebuilding hands the values for a composed law to its parts, and keeps the first error.
@@ -172,8 +195,9 @@ func rebuilt[T any](r *rebuilding, name string, part T) T {
 	if !ok {
 		return part
 	}
-	values := r.take(len(p.Parameters()))
-	if r.err != nil {
+	n := len(p.Parameters())
+	values := r.take(n)
+	if n == 0 || r.err != nil {
 		return part
 	}
 	other, err := p.WithParameters(values)

@@ -327,6 +327,9 @@ func TestAPartWithoutParametersIsKept(t *testing.T) {
 	parameters := law.Parameters()
 	require.Len(t, parameters, 2)
 	assert.Equal(t, "law 2: prefactor", parameters[0].Name)
+	for _, p := range parameters { // the function works in the units it was written for
+		assert.Equal(t, creeplaw.FixedUnits, p.Scale, p.Name)
+	}
 	other, err := law.WithParameters([]float64{2e-15, 5})
 	require.NoError(t, err)
 	check.Rel(t, "x² and twice the other", other.Rate(at(10)).Value, own.Rate(at(10)).Value+2e-10, 1e-15)

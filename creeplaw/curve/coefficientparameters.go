@@ -183,8 +183,9 @@ func (c Activated) WithParameters(values []float64) (Coefficient, error) {
 	r := rebuilding{whole: "activated coefficient", rest: values}
 	c.Coefficient = r.coefficient("coefficient", c.Coefficient)
 	if f, ok := c.Factor.(creeplaw.ParametricFactor); ok {
-		values := r.take(len(f.Parameters()))
-		if r.err == nil {
+		n := len(f.Parameters())
+		values := r.take(n)
+		if n > 0 && r.err == nil {
 			other, err := f.WithParameters(values)
 			r.fail("temperature factor", err)
 			c.Factor = other
@@ -253,6 +254,22 @@ func ownUnit(c Coefficient) (creeplaw.Dimension, bool) {
 	return dimensionless, false
 }
 
+// isTied tells whether a coefficient has something of the user's in it, which works in the units it was written for.
+func isTied(c Coefficient) bool {
+	switch c := c.(type) {
+	case Activated:
+		return isTied(c.Coefficient)
+	case Product:
+		for _, factor := range c {
+			if isTied(factor) {
+				return true
+			}
+		}
+		return false
+	}
+	return len(parametersOf(c, perTime)) == 0
+}
+
 // tied marks parameters that no change of units reaches one by one.
 func tied(all []creeplaw.Parameter) {
 	for i := range all {
@@ -278,7 +295,7 @@ func (c RateOf) Parameters(unit creeplaw.Dimension) []creeplaw.Parameter {
 // WithParameters rebuilds the law.
 func (c RateOf) WithParameters(values []float64) (Coefficient, error) {
 	r := rebuilding{whole: "rate of a law", rest: values}
-	if law, ok := c.Law.(creeplaw.Parametric); ok {
+	if law, ok := c.Law.(creeplaw.Parametric); ok && len(law.Parameters()) > 0 {
 		other, err := law.WithParameters(r.take(len(law.Parameters())))
 		r.fail("law", err)
 		c.Law = other
@@ -324,8 +341,9 @@ func (r *rebuilding) coefficient(part string, c Coefficient) Coefficient {
 	if !ok {
 		return c
 	}
-	values := r.take(len(p.Parameters(dimensionless)))
-	if r.err != nil {
+	n := len(p.Parameters(dimensionless))
+	values := r.take(n)
+	if n == 0 || r.err != nil {
 		return c
 	}
 	other, err := p.WithParameters(values)

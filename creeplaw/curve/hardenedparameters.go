@@ -14,7 +14,10 @@ func (h StrainHardened) Parameters() []creeplaw.Parameter {
 // WithParameters makes the law of the same kind of curve from other numbers. A fault is a *creeplaw.ParameterError.
 func (h StrainHardened) WithParameters(values []float64) (creeplaw.Law, error) {
 	r, ok := RecipeOf(h.curve)
-	if !ok {
+	switch {
+	case !ok && len(values) == 0 && h.curve != nil:
+		return h, nil
+	case !ok:
 		return nil, wrongNumber("strain-hardened curve", len(values))
 	}
 	other, err := r.WithParameters(values)

@@ -205,7 +205,25 @@ func (r Recipe) Parameters() []creeplaw.Parameter {
 	for i, t := range r.Terms {
 		all = append(all, prefixed(fmt.Sprintf("term %d", i+1), t.Parameters())...)
 	}
+	if r.isTied() {
+		tied(all)
+	}
 	return all
+}
+
+// isTied tells whether the curve works in the units it was written for, whatever its numbers: a coefficient is the user's.
+func (r Recipe) isTied() bool {
+	for _, i := range r.Coefficients {
+		if isTied(i.Coefficient) {
+			return true
+		}
+	}
+	for _, t := range r.Terms {
+		if t.isTied() {
+			return true
+		}
+	}
+	return false
 }
 
 // WithParameters returns the recipe with other numbers, in the order of Parameters, and checks those of the coefficients.

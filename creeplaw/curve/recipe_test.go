@@ -234,3 +234,22 @@ func TestIncompleteRecipes(t *testing.T) {
 		assert.False(t, ok, "%T", zero)
 	}
 }
+
+// With a user's function in it a curve works in the units it was written for: no number of it changes with the units.
+func TestAUsersCoefficientTiesACurveToUnits(t *testing.T) {
+	for name, c := range map[string]curve.Coefficient{"alone": ownCoefficient{}, "in a product": curve.Product{curve.Constant(2),
+		ownCoefficient{}}, "activated": hot(ownCoefficient{}), "a law": curve.RateOf{Law: creeplaw.ValueFunc(func(creeplaw.Point) float64 {
+		return 1
+	})}} {
+		law := must(curve.NewStrainHardened(must(curve.NewAndrade(powerAt(1e-4, 4), c))))
+		parameters := law.Parameters()
+		require.GreaterOrEqual(t, len(parameters), 3, name)
+		for _, p := range parameters {
+			assert.True(t, p.Scale == creeplaw.FixedUnits || p.Scale == creeplaw.OnTemperatureScale, "%s: %s", name, p.Name)
+		}
+		again, err := law.WithParameters(valuesOf(parameters))
+		require.NoError(t, err, name)
+		p := creeplaw.Point{Stress: 150, Strain: 1e-3, Temperature: 873}
+		assert.Equal(t, law.Rate(p), again.Rate(p), name)
+	}
+}
