@@ -222,7 +222,7 @@ func capabilityFaults() []faulty {
 
 func TestEveryPlantedFaultIsCaughtUnderItsRule(t *testing.T) {
 	caught := map[string]bool{}
-	for _, faults := range [][]faulty{derivativeFaults(), valueFaults(), zeroFaults(), conductFaults(), capabilityFaults(), evolvingFaults()} {
+	for _, faults := range [][]faulty{derivativeFaults(), valueFaults(), zeroFaults(), conductFaults(), capabilityFaults(), evolvingFaults(), parametricFaults()} {
 		for _, f := range faults {
 			t.Run(f.fault, func(t *testing.T) {
 				var r recorder

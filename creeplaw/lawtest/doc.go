@@ -33,6 +33,9 @@
 //	blind to the principal stress  a law that says it does not see it gives the same without
 //	evolution has the same bits
 //	evolution without allocation
+//	sound parameters            of a Parametric law: each has a name of its own and lies within its bounds
+//	rebuilt from its parameters  the same bits; NaN and a wrong number of values are refused, with no law
+//	units of the parameters     numbers in other units, by their dimensions, give the same rate there
 //
 // The rules for a capability run whenever the law has it. A capability that is claimed and missing is a failure, never a
 // skip, and so is a rule that could examine fewer points than it should have.

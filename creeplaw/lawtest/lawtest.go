@@ -53,6 +53,7 @@ const (
 	Logarithmic                        // creeplaw.Logarithmic
 	Explainer                          // creeplaw.Explainer
 	Evolving                           // creeplaw.Evolving
+	Parametric                         // creeplaw.Parametric
 )
 
 // capabilities is the list to extend when package creeplaw gains one; the rules that exercise it go to the list of rules.
@@ -64,6 +65,7 @@ var capabilities = []struct {
 	{Logarithmic, "creeplaw.Logarithmic", func(l creeplaw.Law) bool { _, ok := l.(creeplaw.Logarithmic); return ok }},
 	{Explainer, "creeplaw.Explainer", func(l creeplaw.Law) bool { _, ok := l.(creeplaw.Explainer); return ok }},
 	{Evolving, "creeplaw.Evolving", func(l creeplaw.Law) bool { _, ok := l.(creeplaw.Evolving); return ok }},
+	{Parametric, "creeplaw.Parametric", func(l creeplaw.Law) bool { _, ok := l.(creeplaw.Parametric); return ok }},
 }
 
 // Result tells how one rule fared.
@@ -90,6 +92,7 @@ func Run(t TB, law creeplaw.Law, box Box) []Result {
 	x := &examination{law: law, box: box, points: box.sample(box.Stress)}
 	x.logarithmic, _ = law.(creeplaw.Logarithmic)
 	x.explainer, _ = law.(creeplaw.Explainer)
+	x.parametric, _ = law.(creeplaw.Parametric)
 	if x.logarithmic != nil {
 		x.logPoints = box.sample(box.LogStress)
 	}
@@ -115,6 +118,7 @@ type examination struct {
 	law         creeplaw.Law
 	logarithmic creeplaw.Logarithmic // nil if the law is not
 	explainer   creeplaw.Explainer   // nil if the law is not
+	parametric  creeplaw.Parametric  // nil if the law is not
 	box         Box
 	points      []creeplaw.Point // in the box
 	logPoints   []creeplaw.Point // in the box, over LogStress

@@ -44,6 +44,9 @@ var rules = []rule{
 	{"blind to the principal stress", Evolving, blindToPrincipal},
 	{"evolution has the same bits", Evolving, evolutionSameBits},
 	{"evolution without allocation", Evolving, evolutionNoAllocation},
+	{"sound parameters", Parametric, parametersSound},
+	{"rebuilt from its parameters", Parametric, rebuilds},
+	{"units of the parameters", Parametric, unitsOfParameters},
 }
 
 func finiteInTheBox(x *examination, y *tally) {
