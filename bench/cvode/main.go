@@ -138,15 +138,13 @@ func encode(all []history) string {
 func walk(m *integrate.Material, h *history, relative float64, stress []tensor.Sym) error {
 	var state integrate.State
 	tolerance := integrate.Tolerance{Relative: relative, Stress: h.scale}
-	next := 0.0
 	for k := 1; k < len(h.knots); k++ {
 		from, to := &h.knots[k-1], &h.knots[k]
-		course, err := m.FollowStress(&stress[k], &state, &state, integrate.Conditions{Strain: from.strain, Temperature: 800},
-			integrate.Increment{Dt: to.time - from.time, Strain: to.strain, Temperature: 800}, tolerance, next)
+		_, err := m.FollowStress(&stress[k], &state, &state, integrate.Conditions{Strain: from.strain, Temperature: 800},
+			integrate.Increment{Dt: to.time - from.time, Strain: to.strain, Temperature: 800}, tolerance, 0)
 		if err != nil {
 			return fmt.Errorf("%s, knot %d: %w", h.name, k, err)
 		}
-		_ = course
 	}
 	return nil
 }
