@@ -17,8 +17,9 @@ import "math"
 // ω = -ln[1 - (1-e^-q) t/t_r]/q. Without damage the creep is Norton's law.
 //
 // The creep rate is the form for cavities and cracks on grain boundaries across the greatest principal stress. As published it
-// rises without bound where the stress is nearly hydrostatic tension; here ⟨σ1⟩/σ counts as 10 at most, which no test reaches.
-// Under such stress a step of damaged material may still end as beyond rupture. At zero von Mises stress there is no creep.
+// rises without bound where the stress is nearly hydrostatic tension. Here ⟨σ1⟩/σ counts as 10 at most, which no test reaches: a
+// ratio x enters as x/(1 + (x/10)¹⁶)^(1/16), which is x to rounding up to 1, to 1e-9 at 3. Under such stress a step of damaged
+// material may still end as beyond rupture. At zero von Mises stress there is no creep.
 //
 // At ω > 1 the law is undefined (NaN), as for a negative or NaN stress. The creep strain does not enter.
 //
@@ -39,8 +40,20 @@ var (
 	_ Logarithmic = LiuMurakami{}
 )
 
-// mostTriaxial is the largest ⟨σ1⟩/σ that counts.
-const mostTriaxial = 10
+// boundedSquare is x² with x bounded smoothly by 10, and its derivative by ln x over itself.
+func boundedSquare(x float64) (square, slope float64) {
+	t := x / 10
+	for range 4 {
+		t *= t
+	}
+	switch {
+	case t < 0x1p-54:
+		return x * x, 2
+	case t > 0x1p54:
+		return 100, 0
+	}
+	return x * x * math.Exp(math.Log1p(t)/-8), 2 / (1 + t)
+}
 
 // LiuMurakamiParameters are the parameters of LiuMurakami. Optional fields may be left zero.
 type LiuMurakamiParameters struct {
@@ -100,14 +113,11 @@ func (l LiuMurakami) Evolve(p EvolvingPoint) (e Evolution) {
 	e.LogRate = l.creep.logRate + l.creep.exponent*math.Log(p.Stress/l.creep.stress)
 	e.Creep.ByLogStress = l.creep.exponent
 	if p.PrincipalStress > 0 && omega > 0 && p.Stress > 0 {
-		ratio := math.Min(p.PrincipalStress/p.Stress, mostTriaxial)
-		root := math.Sqrt(omega)
-		slope := l.coupling * ratio * ratio * root // over ω
+		square, more := boundedSquare(p.PrincipalStress / p.Stress)
+		slope := l.coupling * square * math.Sqrt(omega) // over ω
 		e.LogRate += slope * omega
-		if ratio < mostTriaxial {
-			e.Creep.ByLogStress -= 2 * slope * omega
-			e.Creep.ByPrincipalStress = 2 * slope * omega / p.PrincipalStress
-		}
+		e.Creep.ByLogStress -= more * slope * omega
+		e.Creep.ByPrincipalStress = more * slope * omega / p.PrincipalStress
 		e.Creep.ByInternal[0] = 1.5 * slope
 	}
 	damage := &e.Internal[0]

@@ -102,36 +102,38 @@ func TestSofteningStepNeverFails(t *testing.T) {
 		count = 1_000_000
 	}
 	for k, kind := range softeningLaws() {
-		s := newSource(uint64(2000 + k))
-		var sum internalTally
-		for i := range count {
-			law, err := kind.draw(s)
-			require.NoError(t, err)
-			m := material(t, law)
-			old, inc := drawAnyStep(s, m, kind.box)
-			before := old
-			var out integrate.Result
-			err = m.Step(&out, &old, inc)
-			require.Equal(t, before, old)
-			if err != nil {
-				require.Equal(t, integrate.Result{}, out)
-				require.ErrorIs(t, err, integrate.BeyondRupture, "%s (seed %d, case %d): %+v from %+v with %+v", kind.name, seed, i, inc, old, law)
-				sum.ruptures++
-				continue
+		t.Run(kind.name, func(t *testing.T) {
+			s := newSource(uint64(2000 + k))
+			var sum internalTally
+			for i := range count {
+				law, err := kind.draw(s)
+				require.NoError(t, err)
+				m := material(t, law)
+				old, inc := drawAnyStep(s, m, kind.box)
+				before := old
+				var out integrate.Result
+				err = m.Step(&out, &old, inc)
+				require.Equal(t, before, old)
+				if err != nil {
+					require.Equal(t, integrate.Result{}, out)
+					require.ErrorIs(t, err, integrate.BeyondRupture, "%s (seed %d, case %d): %+v from %+v with %+v", kind.name, seed, i, inc, old, law)
+					sum.ruptures++
+					continue
+				}
+				sum.steps++
+				sum.evaluations += out.Iterations + 1
+				sum.worst = max(sum.worst, out.Iterations+1)
+				require.True(t, allFinite(&out), "%s (seed %d, case %d): %+v at %+v from %+v with %+v", kind.name, seed, i, out, inc, old, law)
+				r := equationsOf(law, m, &out, &old, inc)
+				sum.residual = math.Max(sum.residual, r)
+				if !(r <= 1e-11) {
+					t.Fatalf("%s (seed %d, case %d): residual %v: %+v at %+v from %+v with %+v", kind.name, seed, i, r, out, inc, old, law)
+				}
 			}
-			sum.steps++
-			sum.evaluations += out.Iterations + 1
-			sum.worst = max(sum.worst, out.Iterations+1)
-			require.True(t, allFinite(&out), "%s (seed %d, case %d): %+v at %+v from %+v with %+v", kind.name, seed, i, out, inc, old, law)
-			r := equationsOf(law, m, &out, &old, inc)
-			sum.residual = math.Max(sum.residual, r)
-			if !(r <= 1e-11) {
-				t.Fatalf("%s (seed %d, case %d): residual %v: %+v at %+v from %+v with %+v", kind.name, seed, i, r, out, inc, old, law)
-			}
-		}
-		t.Logf("%-28s %7d steps, %6d beyond rupture, law asked %.2f times, %d at worst, residual %.1e", kind.name, sum.steps,
-			sum.ruptures, float64(sum.evaluations)/float64(sum.steps), sum.worst, sum.residual)
-		require.Positive(t, sum.steps)
+			t.Logf("%-28s %7d steps, %6d beyond rupture, law asked %.2f times, %d at worst, residual %.1e", kind.name, sum.steps,
+				sum.ruptures, float64(sum.evaluations)/float64(sum.steps), sum.worst, sum.residual)
+			require.Positive(t, sum.steps)
+		})
 	}
 }
 
@@ -223,35 +225,37 @@ func TestSofteningTangentIsTheDerivative(t *testing.T) {
 		count = 10_000
 	}
 	for k, kind := range softeningLaws() {
-		s := newSource(uint64(3000 + k))
-		resolved, unsymmetric := 0, 0
-		var worst, worstByT float64
-		for i := range count {
-			law, err := kind.draw(s)
-			require.NoError(t, err)
-			m, free := warm(t, law)
-			old, inc := drawAnyStep(s, m, kind.box)
-			inc.Strain = inc.Strain.Add(tensor.Identity().Scale(free(inc.Temperature)))
-			var out integrate.Result
-			if m.Step(&out, &old, inc) != nil {
-				continue
+		t.Run(kind.name, func(t *testing.T) {
+			s := newSource(uint64(3000 + k))
+			resolved, unsymmetric := 0, 0
+			var worst, worstByT float64
+			for i := range count {
+				law, err := kind.draw(s)
+				require.NoError(t, err)
+				m, free := warm(t, law)
+				old, inc := drawAnyStep(s, m, kind.box)
+				inc.Strain = inc.Strain.Add(tensor.Identity().Scale(free(inc.Temperature)))
+				var out integrate.Result
+				if m.Step(&out, &old, inc) != nil {
+					continue
+				}
+				byStrain, byT, ok := softeningGaps(t, m, &old, inc, &out)
+				if !ok {
+					continue
+				}
+				resolved++
+				worst, worstByT = math.Max(worst, byStrain), math.Max(worstByT, byT)
+				if !out.Tangent.IsSymmetric(1e-9) {
+					unsymmetric++
+				}
+				if !(byStrain <= 1e-7 && byT <= 1e-7) {
+					t.Fatalf("%s (seed %d, case %d): ∂σ/∂ε off by %v, ∂σ/∂T by %v: %+v from %+v with %+v", kind.name, seed, i, byStrain, byT, inc, old, law)
+				}
 			}
-			byStrain, byT, ok := softeningGaps(t, m, &old, inc, &out)
-			if !ok {
-				continue
-			}
-			resolved++
-			worst, worstByT = math.Max(worst, byStrain), math.Max(worstByT, byT)
-			if !out.Tangent.IsSymmetric(1e-9) {
-				unsymmetric++
-			}
-			if !(byStrain <= 1e-7 && byT <= 1e-7) {
-				t.Fatalf("%s (seed %d, case %d): ∂σ/∂ε off by %v, ∂σ/∂T by %v: %+v from %+v with %+v", kind.name, seed, i, byStrain, byT, inc, old, law)
-			}
-		}
-		t.Logf("%-28s %6d of %6d resolved, %5d unsymmetric: worst relative error of ∂σ/∂ε %.1e, of ∂σ/∂T %.1e", kind.name, resolved,
-			count, unsymmetric, worst, worstByT)
-		require.Greater(t, resolved, count/4)
+			t.Logf("%-28s %6d of %6d resolved, %5d unsymmetric: worst relative error of ∂σ/∂ε %.1e, of ∂σ/∂T %.1e", kind.name, resolved,
+				count, unsymmetric, worst, worstByT)
+			require.Greater(t, resolved, count/4)
+		})
 	}
 }
 
@@ -321,32 +325,34 @@ func TestExplainLocatesRupture(t *testing.T) {
 		count = 30_000
 	}
 	for k, kind := range softeningLaws() {
-		s := newSource(uint64(4000 + k))
-		located := 0
-		for i := range count {
-			law, err := kind.draw(s)
-			require.NoError(t, err)
-			m := material(t, law)
-			old, inc := drawAnyStep(s, m, kind.box)
-			var out integrate.Result
-			if err = m.Step(&out, &old, inc); err == nil {
-				continue
+		t.Run(kind.name, func(t *testing.T) {
+			s := newSource(uint64(4000 + k))
+			located := 0
+			for i := range count {
+				law, err := kind.draw(s)
+				require.NoError(t, err)
+				m := material(t, law)
+				old, inc := drawAnyStep(s, m, kind.box)
+				var out integrate.Result
+				if err = m.Step(&out, &old, inc); err == nil {
+					continue
+				}
+				var why *integrate.UpdateError
+				require.True(t, errors.As(m.Explain(err, &old, inc), &why))
+				require.ErrorIs(t, why, integrate.BeyondRupture, "%+v from %+v with %+v", inc, old, law)
+				require.Equal(t, "time within the step at which its solution ends", why.Quantity, "%s (seed %d, case %d): %+v from %+v with %+v", kind.name, seed, i, inc, old, law)
+				require.LessOrEqual(t, why.Value, inc.Dt*(1+1e-9))
+				if !(why.Value > 1e-290) {
+					continue // e^1000 and more times the usual rate: no number for the time
+				}
+				located++
+				shorter := inc
+				shorter.Dt = why.Value * (1 - 1e-8)
+				require.NoError(t, m.Step(&out, &old, shorter), "%s (seed %d, case %d): %+v from %+v with %+v", kind.name, seed, i, shorter, old, law)
+				shorter.Dt = why.Value * (1 + 1e-8)
+				require.ErrorIs(t, m.Step(&out, &old, shorter), integrate.BeyondRupture, "%s (seed %d, case %d): %+v from %+v with %+v", kind.name, seed, i, shorter, old, law)
 			}
-			var why *integrate.UpdateError
-			require.True(t, errors.As(m.Explain(err, &old, inc), &why))
-			require.ErrorIs(t, why, integrate.BeyondRupture, "%+v from %+v with %+v", inc, old, law)
-			require.Equal(t, "time within the step at which its solution ends", why.Quantity, "%s (seed %d, case %d): %+v from %+v with %+v", kind.name, seed, i, inc, old, law)
-			require.LessOrEqual(t, why.Value, inc.Dt*(1+1e-9))
-			if !(why.Value > 1e-290) {
-				continue // e^1000 and more times the usual rate: no number for the time
-			}
-			located++
-			shorter := inc
-			shorter.Dt = why.Value * (1 - 1e-8)
-			require.NoError(t, m.Step(&out, &old, shorter), "%s (seed %d, case %d): %+v from %+v with %+v", kind.name, seed, i, shorter, old, law)
-			shorter.Dt = why.Value * (1 + 1e-8)
-			require.ErrorIs(t, m.Step(&out, &old, shorter), integrate.BeyondRupture, "%s (seed %d, case %d): %+v from %+v with %+v", kind.name, seed, i, shorter, old, law)
-		}
-		t.Logf("%-28s %d ruptures located", kind.name, located)
+			t.Logf("%-28s %d ruptures located", kind.name, located)
+		})
 	}
 }

@@ -21,7 +21,14 @@ const bearable = 0.4
 // exponent of v̇ and n that of ṗ, grows up to the end too if χ ≤ n, and otherwise passes through a maximum at u = 1/(1+χ-n).
 // The bound is formed twice, from the law at the end of the step and from the law at the trial state, because the exponents
 // need not be the same everywhere.
+//
+// All this is for a creep rate that rises with stress all the way. One that sees more than the von Mises stress need not: there
+// only a small fraction relaxed is vouched for.
 func (c *coupled) contracts(x *node, t *trialRates) bool {
+	const little = 0.1
+	if x.fraction > little && (t.seesMore || seesMore(&x.rate.Creep)) {
+		return false
+	}
 	return c.feedbackAtEnd(x, t) <= bearable && c.feedbackFromTrial(x, t) <= bearable
 }
 
@@ -98,12 +105,17 @@ type trialRates struct {
 	sensitivity [creeplaw.MaxVariables]float64
 	exponent    float64 // n
 	softening   float64 // ∂ln ṗ/∂u by the strain
+	seesMore    bool
 }
+
+// seesMore reports whether a rate depends on stress by more than the von Mises stress.
+func seesMore(by *creeplaw.Partials) bool { return by.ByMeanStress != 0 || by.ByPrincipalStress != 0 }
 
 // keep takes what the law says from x. All is over the units of the variables.
 func (c *coupled) keep(t *trialRates, x *node) {
 	m := c.memory
 	t.exponent = c.exponent(x, &x.rate.Creep)
+	t.seesMore = c.creeps && seesMore(&x.rate.Creep)
 	if x.strain > 0 {
 		t.softening = x.rate.Creep.ByLogStrain * (c.elastic / x.strain)
 	}

@@ -2,6 +2,8 @@ package integrate
 
 import (
 	"math"
+
+	"example.com/holdtime/creeplaw"
 )
 
 // solve finds the solution at the end of the step that is connected to Δt → 0, in x. Most steps are short of the trouble that
@@ -179,25 +181,41 @@ func (c *coupled) correct(x *node, held int, e effort) (v verdict, first float64
 		switch {
 		case x.rest <= e.done && size < 4e-9+e.done:
 			return fine, first
-		case contraction > 0.1 && relative < 1e-7:
-			return c.stagnation(x, relative), first
+		case contraction > 0.1 && relative < 1e-3 && i > 0 && c.atRounding(x):
+			return fine, first
 		}
 		before = relative
 	}
 	return tooFar, first
 }
 
-// stagnation accepts corrections that no longer shrink if they are rounding.
-func (c *coupled) stagnation(x *node, size float64) verdict {
-	noise := math.Abs(x.logTime) + math.Abs(c.logElastic) + math.Abs(x.rate.LogRate) + math.Abs(x.rate.Creep.ByLogStress)
+// atRounding reports whether what is left of the equations at x is rounding of their own terms. Corrections then no longer
+// shrink, however large the nearness of a fold or of a limit makes them.
+func (c *coupled) atRounding(x *node) bool {
+	const units = 8 * epsilon
+	argument := func(by *creeplaw.Partials) float64 { // rounding of the arguments of a rate
+		s := math.Abs(by.ByLogStress) + math.Abs(by.ByLogStrain) + math.Abs(by.ByMeanStress*c.mean) +
+			math.Abs(by.ByPrincipalStress*(c.mean+c.principal))
+		for i := range c.count {
+			own := c.memory.unit[i]*math.Abs(x.v[i]) + math.Abs(c.memory.initial[i])
+			s += math.Abs(by.ByInternal[i]) * own
+		}
+		return s
+	}
 	for i := range c.count {
-		own := math.Abs(x.v[i]) + math.Abs(c.memory.initial[i]/c.memory.unit[i])
-		noise += math.Abs(x.sensitivity[i])*own + math.Abs(x.v[i]/x.increment[i])
+		r := &x.rate.Internal[i]
+		terms := math.Abs(x.v[i]) + math.Abs(c.before[i]) + math.Abs(x.increment[i])*(1+math.Abs(x.logTime)+math.Abs(r.LogScale)) +
+			x.growth[i]*argument(&r.Partials)
+		if !(math.Abs(x.residual[i]) <= units*terms) {
+			return false
+		}
 	}
-	if size <= 16*epsilon*noise {
-		return fine
+	if !c.creeps {
+		return true
 	}
-	return tooFar
+	terms := math.Abs(x.logTime) + math.Abs(c.logElastic) + math.Abs(x.rate.LogRate) + math.Abs(math.Log(x.fraction)) +
+		argument(&x.rate.Creep)
+	return math.Abs(x.residual[c.count]) <= units*terms
 }
 
 // direction is a change of the coordinates: the variables, z where there is creep, ln Δt.
@@ -233,9 +251,14 @@ func (c *coupled) measure(x *node, d *direction, increments bool) (size, rest fl
 // negligibleIncrement is an increment of a variable over its unit that would not show after 1e6 steps.
 const negligibleIncrement = 1e-22
 
-// weight is the change of a variable that matters, inverted: what moves the creep rate by a factor e, or the way to the limit.
+// weight is the change of a variable that matters, inverted: what moves the creep rate by a factor e, or the variable's own rate
+// where it feeds on itself, or the way to the limit.
 func (c *coupled) weight(x *node, i int) float64 {
-	return math.Abs(x.sensitivity[i]) + 1/math.Abs(c.memory.limit[i]-x.v[i])
+	weight := math.Abs(x.sensitivity[i]) + 1/math.Abs(c.memory.limit[i]-x.v[i])
+	if r := &x.rate.Internal[i]; r.ByInternal[i] > 0 && r.Value != 0 {
+		weight += r.ByInternal[i] * c.memory.unit[i] / math.Abs(r.Value)
+	}
+	return weight
 }
 
 // leash is the fraction of a correction that is safe: no further than a factor of e³ in the rates, nor half way to a limit.

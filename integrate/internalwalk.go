@@ -42,13 +42,15 @@ func (w *walker) run() Code {
 	w.length = firstWalkStep
 	for range mostWalkSteps {
 		done := onTheWay
+		w.length = min(w.length, w.foresight())
 		switch rest := w.target - w.at.logTime; {
 		case w.atLimit(&w.at):
 			w.end, done = w.at.logTime, ended
 		case w.locate && rest < -1:
 			return NoConvergence
 		case w.length < shortestStep:
-			if !w.roundCorner() {
+			var found bool
+			if done, found = w.roundCorner(); !found {
 				return w.stuck()
 			}
 		case !w.locate && w.length*w.along[w.size()] >= rest:
@@ -95,6 +97,37 @@ func (w *walker) begin() Code {
 	return NoConvergence
 }
 
+// foresight is the longest step within sight. No increment of a variable that grows now may come to matter more than can be
+// seen from here, if it goes on as an exponential: as it grows now, or as it will where little stress is left, n - χ; what looks
+// like faster growth than that of the time is a passage through zero. And while the stress falls from nearly all to little, which
+// is where the variables do most and where the curve may turn back and forth, z goes by small steps.
+func (w *walker) foresight() float64 {
+	const matters, least = 0.1, 0.7
+	longest := math.Inf(1)
+	x, n := &w.at, w.size()
+	byZ := 0.0
+	if w.creeps {
+		byZ = math.Abs(w.along[w.count])
+	}
+	for i := range w.count {
+		growth := min(max(w.along[i]/x.increment[i], -w.excess(x, i)*byZ), w.along[n])
+		if !(growth > 0) {
+			continue
+		}
+		effect := math.Abs(x.increment[i]) * w.weight(x, i)
+		longest = min(longest, max(math.Log(matters/effect), least)/growth)
+	}
+	const from, to, small = -3, 6, 1
+	if byZ > 0 && x.odds < math.MaxFloat64 {
+		if z := math.Log(x.odds); z < from {
+			longest = min(longest, (from-z+small)/byZ)
+		} else if z < to {
+			longest = min(longest, small/byZ)
+		}
+	}
+	return longest
+}
+
 // beginAt tries to begin where a fraction u has relaxed, or, without creep, after that fraction of the step.
 func (w *walker) beginAt(fraction float64) verdict {
 	x := &w.at
@@ -138,6 +171,9 @@ func (w *walker) beginAt(fraction float64) verdict {
 			return tooFar // the rates change faster than could be seen from the start
 		}
 	}
+	if w.creeps && !(w.along[w.count] > 0 && x.share*x.rate.Creep.ByLogStrain <= 2*bearableError) {
+		return tooFar
+	}
 	w.normalise(&w.along)
 	return fine
 }
@@ -153,7 +189,7 @@ func (w *walker) startShrink(x *node) float64 {
 	base := w.target // of increments per step
 	if w.creeps {
 		base = w.logElastic - x.rate.LogRate
-		raise(1+math.Abs(w.exponent(x, &x.rate.Creep))+math.Abs(x.rate.Creep.ByLogStrain)*w.strainShare(), 0)
+		raise(1+math.Abs(w.exponent(x, &x.rate.Creep))+math.Abs(x.rate.Creep.ByLogStrain)*w.strainShare(x), 0)
 	}
 	for i := range w.count {
 		r := &x.rate.Internal[i]
@@ -169,12 +205,12 @@ func (w *walker) startShrink(x *node) float64 {
 	return startFeedback * math.Exp(-most)
 }
 
-// strainShare is what a fraction relaxed adds to ln p, per fraction.
-func (w *walker) strainShare() float64 {
-	if w.start == 0 {
+// strainShare is what a fraction relaxed adds to ln p, per fraction; hardening from zero strain follows it as a power.
+func (w *walker) strainShare(x *node) float64 {
+	if w.start == 0 && x.rate.Creep.ByLogStrain <= 0 {
 		return 1
 	}
-	return w.elastic / w.start
+	return w.elastic / x.strain
 }
 
 // normalise scales a direction to the largest weighted component 1.
@@ -283,18 +319,25 @@ func (w *walker) step() progress {
 func (w *walker) bends(y *node, here, there *direction, length float64) bool {
 	n := w.size()
 	way := w.way(y)
-	astray := func(i int, weight float64) bool {
+	astray := func(i int, weight, free float64) bool {
 		byEnds := 0.5 * length * (here[i] + there[i])
-		return weight*math.Abs(way[i]-byEnds) > 0.2*weight*math.Abs(way[i])+0.1
+		return weight*math.Abs(way[i]-byEnds) > 0.2*weight*math.Abs(byEnds)+free
 	}
-	bent := astray(n, 1) || w.softens(y)
+	bent := astray(n, 1, 1e-3) || w.softens(y)
 	if w.creeps {
-		bent = bent || astray(w.count, 1)
+		bent = bent || astray(w.count, 1, 0.1)
 	}
 	for i := range w.count {
-		bent = bent || astray(i, w.weight(y, i))
+		bent = bent || astray(i, w.weight(y, i), 0.1)
 	}
-	return bent
+	if bent || !(here[n] > 0 && there[n] > 0) {
+		return bent
+	}
+	terms := math.Abs(y.logTime) + math.Abs(y.rate.LogRate)
+	for i := range w.count {
+		terms += w.weight(y, i) * math.Abs(y.v[i])
+	}
+	return dip(way[n], length*here[n], length*there[n]) > 64*epsilon*terms
 }
 
 // softens reports whether the softening by the creep strain, which no coordinate stands for, has changed much from here to y.
@@ -305,7 +348,7 @@ func (w *walker) softens(y *node) bool {
 
 // roundCorner gets past a corner of the curve, as where the rupture stress passes through zero and damage stops: a small
 // step with another coordinate held, whose end is near enough to be on the curve whatever its direction.
-func (w *walker) roundCorner() bool {
+func (w *walker) roundCorner() (done progress, found bool) {
 	const small, near = 1e-6, 0.05
 	for held := w.size(); held >= 0; held-- {
 		if w.along[held] == 0 {
@@ -325,12 +368,19 @@ func (w *walker) roundCorner() bool {
 			along = *scaled(along, -1)
 		}
 		along = *scaled(along, 1/w.reach(&y, &along))
-		if along[w.size()] > 0 {
-			w.at, w.along, w.length = y, along, small
-			return true
+		if !(along[w.size()] > 0) {
+			continue
 		}
+		if !w.locate && y.logTime > w.target {
+			if w.between(&y) {
+				return arrived, true
+			}
+			continue
+		}
+		w.at, w.along, w.length = y, along, small
+		return onTheWay, true
 	}
-	return false
+	return onTheWay, false
 }
 
 // accept moves to y, unless the target lies on the way there, or the curve turned back: then the step is shortened until it is
@@ -341,7 +391,8 @@ func (w *walker) accept(y *node, along *direction, length, first float64) progre
 	case along[n] <= 0:
 		top := crest(w.at.logTime, y.logTime, w.along[n]*length, along[n]*length)
 		doubt := (top - max(w.at.logTime, y.logTime)) + 4*epsilon*math.Abs(top)
-		if length < 1e-6 || !w.locate && top+doubt < w.target {
+		sharp := length * (math.Abs(w.along[n]) + math.Abs(along[n])) // at a smooth fold both vanish with the length
+		if length < 1e-6 && (sharp < 1e-10 || length < 4*shortestStep) || !w.locate && top+doubt < w.target {
 			w.end = top
 			return ended
 		}
@@ -422,6 +473,22 @@ func scaled(d direction, by float64) *direction {
 		d[i] *= by
 	}
 	return &d
+}
+
+// dip is how far the cubic with the values 0 and b and the slopes da, db > 0 at the ends of [0, 1] falls on the way.
+func dip(b, da, db float64) float64 {
+	c2, c3 := 3*b-2*da-db, da+db-2*b
+	root := c2*c2 - 3*c3*da
+	if !(root > 0) {
+		return max(0, -b)
+	}
+	at := func(s float64) float64 { return s * (da + s*(c2+s*c3)) }
+	root = math.Sqrt(root)
+	top, bottom := da/(root-c2), da/(-root-c2) // where the slope vanishes, in the form that does not cancel
+	if !(top > 0 && bottom > top && bottom < 1) {
+		return max(0, -b)
+	}
+	return at(top) - at(bottom)
 }
 
 // crest is the largest value on [0, 1] of the cubic with the values a, b and the slopes da > 0, db ≤ 0 at the ends.
