@@ -6,6 +6,7 @@ import (
 	"fmt"
 	"os"
 	"path/filepath"
+	"regexp"
 	"strings"
 	"testing"
 	"unicode/utf8"
@@ -38,8 +39,14 @@ func TestTextReport(t *testing.T) {
 		}
 		want, err := os.ReadFile(path)
 		require.NoError(t, err)
-		require.Equal(t, string(want), text, name)
+		require.Equal(t, uncounted(string(want)), uncounted(text), name)
 	}
+}
+
+// uncounted takes the number of evaluations out of a report: how often a search halves depends on the last bit, which differs
+// between machines that fuse multiplication and addition and those that do not.
+func uncounted(text string) string {
+	return regexp.MustCompile(`\d+\s+evaluations`).ReplaceAllString(text, "many evaluations")
 }
 
 // TestTextNamesEverything: whatever was found or asked is in the text, and the date is that of the caller.

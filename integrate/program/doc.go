@@ -20,8 +20,11 @@
 // Within a segment the walk takes steps of the fourth-order implicit Runge–Kutta method that is under Material.Follow: each
 // stage is a backward-Euler step under mixed control. The difference to the embedded third-order result, judged for the stress
 // as the control lets it show, for the creep strain and for the internal variables, keeps every step within the tolerance. A
-// signal that jumps is answered elastically, in no time. Hardening that starts from zero strain with an infinite rate is
+// signal that jumps is answered elastically, or by yielding, in no time. Hardening that starts from zero strain with an infinite rate is
 // entered by a backward-Euler step too short to matter, from which the steps grow.
+//
+// A material with plasticity is walked by plain steps, whole and in halves, extrapolated to second order: at tight tolerances
+// that takes many more steps than creep alone.
 //
 // # Units
 //

@@ -44,7 +44,7 @@ type Record struct {
 	Stress      tensor.Sym
 	Strain      tensor.Sym // total strain [-], tensor shear components
 	State       integrate.State
-	Dissipated  float64 // ∫ σ:dεc per volume since the start [stress]
+	Dissipated  float64 // ∫ σ:(dεc + dεp) per volume since the start [stress]
 	Step        float64 // length of the step that led here [time]
 	Error       float64 // its estimated error over what the tolerance allows
 	Count       Count   // the work so far
@@ -62,7 +62,7 @@ var header = []string{"time", "reason", "block", "cycle", "segment", "name", "ev
 	"stress_xx", "stress_yy", "stress_zz", "stress_yz", "stress_xz", "stress_xy", "mises",
 	"strain_xx", "strain_yy", "strain_zz", "strain_yz", "strain_xz", "strain_xy",
 	"creep_xx", "creep_yy", "creep_zz", "creep_yz", "creep_xz", "creep_xy", "equivalent_creep",
-	"dissipated", "step", "error", "steps", "rejected", "solves", "iterations"}
+	"equivalent_plastic", "dissipated", "step", "error", "steps", "rejected", "solves", "iterations"}
 
 // WriteCSV writes records as comma-separated values with a header line, in the units of the material, strains with tensor shear,
 // numbers in full precision. variables are those of the material (Material.Variables); each adds a column of its value.
@@ -98,7 +98,7 @@ func (r *Record) cells(variables []creeplaw.Variable) []string {
 	for _, v := range r.State.Creep {
 		cells = append(cells, f(v))
 	}
-	cells = append(cells, f(r.State.Equivalent), f(r.Dissipated), f(r.Step), f(r.Error), strconv.Itoa(r.Count.Steps),
+	cells = append(cells, f(r.State.Equivalent), f(r.State.EquivalentPlastic), f(r.Dissipated), f(r.Step), f(r.Error), strconv.Itoa(r.Count.Steps),
 		strconv.Itoa(r.Count.Rejected), strconv.Itoa(r.Count.Solves), strconv.Itoa(r.Count.Iterations))
 	for i, v := range variables {
 		cells = append(cells, f(v.Initial+r.State.Internal[i]))

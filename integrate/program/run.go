@@ -178,7 +178,7 @@ const (
 // advance takes one accepted step, not past the time until, and ends it at the first event on its way.
 func (r *Run) advance(until float64) error {
 	w := &r.walker
-	if !finite(w.rates[0].equivalent) {
+	if !finite(w.rates[0].equivalent) && !w.plastic {
 		return w.singular(until)
 	}
 	var failure error = integrate.BeyondRupture // rates that grow without bound leave no step long enough
@@ -190,18 +190,14 @@ func (r *Run) advance(until float64) error {
 		if !(h > least*(r.offset+w.now.time)) {
 			break
 		}
-		end, err := w.try(h)
-		worst := math.NaN()
-		if err == nil {
-			worst, err = w.judge(h, &end)
-		}
+		end, worst, err := w.attempt(h)
 		switch {
 		case err != nil && !integrate.Recoverable(err) && !errors.Is(err, integrate.BadState):
 			return w.explain(err, w.increment(w.now.time+h, h, false))
 		case err != nil || math.IsNaN(worst):
 			w.next = h / 4
 		default:
-			w.next = h * dirk.Factor(worst, w.last)
+			w.next = h * w.factor(worst)
 		}
 		if err == nil && worst <= 1 {
 			r.accept(end, h, until, worst)
@@ -344,7 +340,7 @@ func (r *Run) locate(event int, a, b, h float64) (at point, length float64, ok b
 		if !(length > low && length < high) {
 			length = low + (high-low)/2
 		}
-		p, err := w.try(length)
+		p, _, err := w.attempt(length)
 		if err != nil {
 			return p, 0, false
 		}

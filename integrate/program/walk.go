@@ -46,6 +46,7 @@ type walker struct {
 	evolving  creeplaw.Evolving // nil for a law without variables of its own
 	variables []creeplaw.Variable
 	tolerance integrate.Tolerance
+	plastic   bool // see plastic.go
 
 	segment *Segment
 	before  point // what the segment began with: where signals that hold what was reached take their values
@@ -65,6 +66,7 @@ type walker struct {
 func newWalker(m *integrate.Material, tolerance integrate.Tolerance) walker {
 	w := walker{material: m, law: creeplaw.Log(m.Law()), variables: m.Variables(), tolerance: tolerance}
 	w.evolving, _ = m.Law().(creeplaw.Evolving)
+	w.plastic = m.Plasticity().Hardening != nil
 	return w
 }
 
@@ -96,16 +98,22 @@ func (w *walker) jump() (moved bool, err error) {
 	}
 	scale := math.Max(w.out.Stress.Norm(), w.now.stress.Norm())
 	moved = w.out.Stress.Sub(w.now.stress).Norm() > 1e-12*scale || inc.Temperature != w.now.warmth
-	w.now.stress, w.now.strain, w.now.warmth = w.out.Stress, w.out.Strain, inc.Temperature
+	w.now.dissipated += w.out.Stress.Dot(inelastic(&w.now.state, &w.out.State)) // by yielding; nothing creeps in no time
+	w.now.state, w.now.stress, w.now.strain, w.now.warmth = w.out.State, w.out.Stress, w.out.Strain, inc.Temperature
 	w.fresh = w.fresh && !moved
 	w.meet(&w.now)
 	return moved, nil
 }
 
+// inelastic is what creep and plastic strain gained from one state to another.
+func inelastic(from, to *integrate.State) tensor.Sym {
+	return to.Creep.Sub(from.Creep).Add(to.Plastic.Sub(from.Plastic))
+}
+
 func (w *walker) meet(p *point) {
 	if m := p.stress.Mises(); m > w.largest {
 		w.largest = m
-		w.elastic = p.strain.Sub(p.state.Creep).Deviator().EquivalentStrain()
+		w.elastic = p.strain.Sub(p.state.Creep).Sub(p.state.Plastic).Deviator().EquivalentStrain()
 	}
 }
 
@@ -170,6 +178,9 @@ func (w *walker) length(first float64) {
 	if !(w.next < w.segment.Duration) {
 		w.next = w.segment.Duration / 8
 	}
+	if !(w.next > 0) { // an infinite rate, where the plain step starts by itself
+		w.next = 1e-6 * w.segment.Duration
+	}
 }
 
 // singular takes the first step where the rate is infinite: by backward Euler, so short that its creep strain does not matter.
@@ -215,6 +226,26 @@ func (w *walker) stage(start *point, time, dt float64, after bool) (end point, f
 		f.power = end.stress.Dot(f.creep)
 	}
 	return end, f, nil
+}
+
+// attempt takes a step of length h from now and returns its end, with its estimated error over what the tolerance allows.
+func (w *walker) attempt(h float64) (end point, worst float64, err error) {
+	if w.plastic {
+		return w.attemptPlastic(h)
+	}
+	if end, err = w.try(h); err != nil {
+		return end, 0, err
+	}
+	worst, err = w.judge(h, &end)
+	return end, worst, err
+}
+
+// factor is how much longer the next step may be.
+func (w *walker) factor(worst float64) float64 {
+	if w.plastic {
+		return math.Max(0.15, math.Min(6, 0.85/math.Sqrt(worst))) // the error judged is that of first-order steps
+	}
+	return dirk.Factor(worst, w.last)
 }
 
 // try runs the stages of a step of length h from now and returns its end.
