@@ -33,7 +33,7 @@ func newMemory(law creeplaw.Law) (m memory, err error) {
 			return m, &MaterialError{"initial value of the " + v.Name, v.Initial, 0, "finite"}
 		}
 		room := v.Limit - v.Initial
-		if !(room != 0) {
+		if room == 0 || math.IsNaN(room) {
 			return m, &MaterialError{"limit of the " + v.Name, v.Limit, 0, "apart from the initial value"}
 		}
 		m.names[i], m.initial[i], m.unit[i] = v.Name, v.Initial, 1

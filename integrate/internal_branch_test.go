@@ -195,6 +195,7 @@ func damagingLaws() []damaging {
 				RuptureStress: creeplaw.RuptureStress{Principal: s.uniform(0, 0.7), Mean: s.uniform(0, 0.3)},
 			})
 		}, widest},
+		{"four variables", drawEverything, stepBox{3.2, 0.9, 0.5}},
 		{"Perrin–Hayhurst", func(s source) (creeplaw.Evolving, error) { return creeplaw.NewPerrinHayhurst(drawCavitation(s)) },
 			stepBox{3, 0.6, 0.5}},
 		{"Kowalewski–Hayhurst–Dyson", func(s source) (creeplaw.Evolving, error) {
@@ -234,6 +235,9 @@ func drawProblem(s source, law creeplaw.Evolving, box stepBox) (integrate.State,
 	for i, v := range law.Variables() {
 		if s.IntN(2) == 0 {
 			room := v.Limit - v.Initial
+			if math.IsInf(room, 0) {
+				room = 1
+			}
 			if v.Initial != 0 { // a resistance rather than a damage
 				old.Internal[i] = v.Initial * s.uniform(-0.6, 1.5)
 				continue
