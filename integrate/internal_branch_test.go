@@ -182,7 +182,7 @@ func damagingLaws() []damaging {
 		return func(s source) (creeplaw.Evolving, error) {
 			return creeplaw.NewKachanovRabotnov(creeplaw.KachanovRabotnovParameters{
 				Prefactor: 1e-6, StressExponent: s.uniform(1, 15), DamagePrefactor: s.decades(-6, -2),
-				DamageStressExponent: s.uniform(0.5, 15), DamageExponent: s.uniform(0, 20),
+				DamageStressExponent: s.uniform(1, 15), DamageExponent: s.uniform(0, 20), // σr^χ with χ < 1 has a kink at σr = 0
 				ReferenceStress: 100, RuptureStress: r(s),
 			})
 		}

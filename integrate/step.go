@@ -16,7 +16,9 @@ type Increment struct {
 
 // Result is what a step gives back.
 //
-// The tangent is symmetric whenever the law sees only the von Mises stress. A step long enough to relax a point completely
+// The tangent is symmetric whenever the law sees only the von Mises stress. A law that sees the mean or the greatest principal
+// stress has an unsymmetric one; where the two greatest principal stresses coincide, σ1 has a corner, and the tangent is the
+// mean of those on both sides. A step long enough to relax a point completely
 // has a tangent without deviatoric stiffness: that is correct, and a host structure of such points alone is singular, so a
 // host that meets it should cut the step.
 type Result struct {
@@ -41,6 +43,12 @@ type Result struct {
 //
 // Δt = 0 is an elastic step. A trial state without deviator (hydrostatic strain) does not creep. A creep increment below
 // about 1e-278 of the elastic strain is taken as zero.
+//
+// Internal variables of the law are carried along by the same rule, vᵢ = vᵢ(old) + Δt v̇ᵢ, solved together with Δp. Where the
+// equations of a softening law have several solutions, or none, the step takes the one that is connected to Δt → 0. Where
+// that solution ends before the end of the step, by turning back or because a variable comes to within 1e-6 of the way from
+// its initial value to its limit, the error is BeyondRupture, and Explain names the time. The local stress exponent of such a
+// law may go to some thousands.
 //
 // The error is nil or a Code; then out is untouched. old is never written, but may be &out.State.
 func (m *Material) Step(out *Result, old *State, inc Increment) error {
