@@ -179,7 +179,7 @@ func (c *coupled) correct(x *node, held int, e effort) (v verdict, first float64
 		contraction := min(1, relative/before)
 		x.rest = relative * contraction // the next correction would be smaller
 		switch {
-		case x.rest <= e.done && size < 4e-9+e.done:
+		case x.rest <= e.done && size < 2e-10+e.done:
 			return fine, first
 		case contraction > 0.1 && relative < 1e-3 && i > 0 && c.atRounding(x):
 			return fine, first
