@@ -41,6 +41,7 @@ func (b *Batch) run(ctx context.Context, p *Points, n int) error {
 	for k := 1; k < workers; k++ {
 		others.Go(func() { r.work(ctx, &r.tallies[k]) })
 	}
+	defer others.Wait() // also where a law ends this goroutine: nobody may write to the caller's arrays afterwards
 	r.work(ctx, &r.tallies[0])
 	others.Wait()
 	if p := r.panicky.Load(); p != nil {
