@@ -38,8 +38,10 @@ const (
 
 	// BeyondRupture: a softening law has no solution at the end of the step that is connected to a vanishing step: rupture,
 	// or an instability at fixed strain, lies within it.
-	// Usual cause: tertiary creep near the end of life, or a prescribed stress above what the material can carry.
-	// What to do: take a smaller step to approach rupture; stop when the smallest useful step still returns it.
+	// Usual cause: tertiary creep near the end of life, an internal variable that reaches its limit, or a prescribed stress
+	// above what the material can carry.
+	// What to do: take a smaller step to approach rupture; stop when the smallest useful step still returns it. For a law with
+	// internal variables Explain gives the time within the step at which the solution ends.
 	BeyondRupture
 )
 
