@@ -225,21 +225,13 @@ func (m *Material) writeInternal(out *Result, old *State, inc *Increment, t *tri
 		answers = [4]answer{}
 	}
 	fall := -x.kept * x.fraction // dr/dz
-	start := *old
 	keep := 2 * t.shear * x.kept
 	var n tensor.Sym
 	if t.equivalent > 0 {
 		n = t.deviator.Scale((2.0 / 3) / t.equivalent)
 	}
-	mean := t.bulk * t.volumetric
-	for i := range out.Stress {
-		out.Stress[i] = keep * t.deviator[i]
-		out.State.Creep[i] = start.Creep[i] + x.fraction*t.deviator[i]
-	}
-	addMean(&out.Stress, mean)
+	t.write(&out.Stress, &out.State, old, x.fraction, x.kept)
 	out.CreepStep = x.fraction * t.equivalent
-	out.State.Equivalent = start.Equivalent + out.CreepStep
-	out.State.Internal = start.Internal
 	for i := range c.count {
 		out.State.Internal[i] = x.v[i] * m.memory.unit[i]
 	}

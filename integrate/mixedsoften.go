@@ -7,7 +7,7 @@ import (
 )
 
 // solveSoftening finds the root of F that is connected to Δt → 0 for a law whose rate grows with creep strain, as
-// relaxation.solveSoftening does: it walks up from where F is surely negative until F changes sign. Where F turns down
+// relaxation.soften does: it walks up from where F is surely negative until F changes sign. Where F turns down
 // before, no connected solution exists.
 func (a *flow) solveSoftening(x *flowed, first creeplaw.LogRate) Code {
 	level := a.logTime + first.Value

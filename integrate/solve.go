@@ -58,7 +58,7 @@ func (a *relaxation) solve(x *relaxed) Code {
 	case math.IsInf(first.Value, -1):
 		return 0
 	case first.ByLogStrain > 0:
-		return a.soften(x, first)
+		return a.soften(x)
 	}
 	level, slope := a.logTime+first.Value, 1.0
 	switch hardening := -first.ByLogStrain; {
@@ -84,11 +84,6 @@ func (a *relaxation) solve(x *relaxed) Code {
 		n = 0
 	}
 	return a.iterate(x, first, firstGuess(level, n))
-}
-
-func (a *relaxation) soften(x *relaxed, first creeplaw.LogRate) (code Code) {
-	*x, code = a.solveSoftening(first)
-	return code
 }
 
 // firstGuess returns the odds u/(1-u) that solve z + (n-1) softplus(z) = level with z = ln(odds): the problem of a power law
@@ -167,7 +162,7 @@ func (a *relaxation) iterate(x *relaxed, first creeplaw.LogRate, odds float64) C
 		case math.IsNaN(f):
 			return LawUndefined
 		case x.rate.ByLogStrain > 0: // not to be seen at zero strain, where the exponent vanishes
-			return a.soften(x, first)
+			return a.soften(x)
 		case small && size <= tolerance, (size < 1e-6 || x.rate.ByLogStress-x.rate.ByLogStrain > 1e8) && size <= a.rounding(x, logFraction):
 			x.residual = size
 			return 0

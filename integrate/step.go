@@ -175,26 +175,15 @@ func (a *relaxation) linearise(x *relaxed) (linearised, bool) {
 
 // write fills the result. Each component of old is read before the same one of out.State is written, so old may be &out.State.
 func (out *Result) write(old *State, t *trial, x *relaxed, d linearised) {
-	keep := 2 * t.shear * x.kept
-	mean := t.bulk * t.volumetric
-	for i, e := range t.deviator {
-		out.Stress[i] = keep * e
-		out.State.Creep[i] = old.Creep[i] + x.fraction*e
-	}
-	out.Stress[tensor.XX] += mean
-	out.Stress[tensor.YY] += mean
-	out.Stress[tensor.ZZ] += mean
-	out.CreepStep = x.fraction * t.equivalent
-	out.State.Equivalent = old.Equivalent + out.CreepStep
-	out.State.Internal = old.Internal
-	out.State.Plastic, out.State.EquivalentPlastic, out.PlasticStep = old.Plastic, old.EquivalentPlastic, 0
+	t.write(&out.Stress, &out.State, old, x.fraction, x.kept)
+	out.CreepStep, out.PlasticStep = x.fraction*t.equivalent, 0
 	out.Iterations, out.Residual = x.iterations, x.residual
 
 	var n tensor.Sym // flow direction s/σₑ, the same for trial and end
 	if t.equivalent > 0 {
 		n = t.deviator.Scale((2.0 / 3) / t.equivalent)
 	}
-	fillTangent(&out.Tangent, t.bulk, keep, 3*t.shear*d.excess, &n)
+	fillTangent(&out.Tangent, t.bulk, 2*t.shear*x.kept, 3*t.shear*d.excess, &n)
 	meanByT := t.bulkByT*t.volumetric - 3*t.bulk*t.expansion
 	misesByT := 3 * t.equivalent * (t.shearByT*x.kept*d.elastic + t.shear*d.byTemperature)
 	for i := range out.ByTemperature {

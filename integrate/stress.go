@@ -62,27 +62,11 @@ func (m *Material) stressInternal(stress *tensor.Sym, end, old *State, inc *Incr
 	if !x.finish(&c) {
 		return BeyondRupture
 	}
-	x.write(stress, end, old, t)
+	t.write(stress, end, old, x.fraction, x.kept)
 	for i := range c.count {
 		end.Internal[i] = x.v[i] * m.memory.unit[i]
 	}
 	return 0
-}
-
-// write is the part of writeInternal that Stress wants, in the same words: compilers that fuse products into sums then do so in
-// both, or in neither.
-func (x *node) write(stress *tensor.Sym, end, old *State, t *trial) {
-	start := *old
-	keep := 2 * t.shear * x.kept
-	mean := t.bulk * t.volumetric
-	for i := range stress {
-		stress[i] = keep * t.deviator[i]
-		end.Creep[i] = start.Creep[i] + x.fraction*t.deviator[i]
-	}
-	addMean(stress, mean)
-	step := x.fraction * t.equivalent
-	end.Equivalent = start.Equivalent + step
-	end.Internal, end.Plastic, end.EquivalentPlastic = start.Internal, start.Plastic, start.EquivalentPlastic
 }
 
 // write sets stress and state for the fraction of the trial deviator that crept away. end may be old.

@@ -297,10 +297,10 @@ func (w *walker) judge(h float64, end *point) (float64, error) {
 	const idle, least, sharing = 0.1, 0.003, 4.0 / 5
 	time := least + idle*h/w.segment.Duration
 	made := end.state.Equivalent - w.now.state.Equivalent
-	error := elastic.stress.Sub(end.stress)
+	apart := elastic.stress.Sub(end.stress)
 	size := math.Max(stressFloor, math.Max(mises, w.now.stress.Mises()))
 	whole := math.Max(creepFloor, end.state.Equivalent)
-	stress := math.Max(error.Mises(), math.Abs(error.Mean())) / (size * math.Pow(math.Min(1, made/strain+time), sharing))
+	stress := math.Max(apart.Mises(), math.Abs(apart.Mean())) / (size * math.Pow(math.Min(1, made/strain+time), sharing))
 	creep := end.state.Creep.Sub(other.state.Creep).EquivalentStrain()
 	creep = math.Max(creep, math.Abs(end.state.Equivalent-other.state.Equivalent)) /
 		(whole * math.Pow(math.Max(made, 0)/whole+time, sharing))
